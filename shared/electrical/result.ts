@@ -76,7 +76,12 @@ export interface DeviceLoad {
 
 /** What the network cannot be, in data: judged by rules. */
 export type NetworkProblem =
-  | { kind: 'sources-joined'; line: Rail; sources: readonly { part: ResolvedPart; rail: SupplyRail }[]; parts: readonly ResolvedPart[] }
+  | {
+      kind: 'sources-joined'
+      line: Rail
+      sources: readonly { part: ResolvedPart; rail: SupplyRail }[]
+      parts: readonly ResolvedPart[]
+    }
   | { kind: 'no-return'; part: ResolvedPart; connector: ResolvedConnector; line: Rail }
   | { kind: 'indeterminate-loop'; line: Line; parts: readonly ResolvedPart[] }
 
