@@ -268,6 +268,8 @@ export const modelSchema = z
     /** How the plugs are made. Matters for adapters. */
     construction: z.enum(constructions).optional(),
     load: loadSchema.optional(),
+    /** Connector at which each rail's load is drawn. Absent: the part's first connector that carries the rail. */
+    loadAt: z.partialRecord(railSchema, localIdSchema).optional(),
     drive: driveSchema.optional(),
     controllers: z.array(controllerSchema).max(8).default([]),
     expander: expanderSchema.optional(),
@@ -304,6 +306,7 @@ export const modelSchema = z
       controller.ports.forEach((port, j) => check(port, ['controllers', i, 'ports', j])),
     )
     model.expander?.ports.forEach((port, j) => check(port, ['expander', 'ports', j]))
+    for (const [rail, id] of Object.entries(model.loadAt ?? {})) check(id, ['loadAt', rail])
     const supplyRails = new Set(model.supply?.rails.map((rail) => rail.id))
     model.connectors.forEach((connector, i) => {
       for (const [rail, id] of Object.entries(connector.feeds ?? {}))
