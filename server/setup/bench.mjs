@@ -1,0 +1,3 @@
+import { runScript } from './script.mjs'
+
+await runScript('tests/bench/index.ts', { tools: ['ngspice'] })

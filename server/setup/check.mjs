@@ -1,0 +1,3 @@
+import { runScript } from './script.mjs'
+
+await runScript('server/cli/check.ts', { failed: 2 })

@@ -1,0 +1,3 @@
+import { runScript } from './script.mjs'
+
+await runScript('tests/fuzz/index.ts')
