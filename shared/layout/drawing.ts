@@ -7,9 +7,9 @@
  */
 
 export type DrawnNodeKind =
-  /** A tag: supply, lead, splitter, adapter, breakout, cable, controller, expander, board, fan, load, loose drive. */
+  /** A tag: supply, lead, splitter, adapter, breakout, cable, controller, expander, board, fan, load. */
   | 'part'
-  /** A drive in its bay: one row of the strip. */
+  /** A drive in its bay: one row of the strip. Without `slot`: a drive that has no bay yet, in a row of its own. */
   | 'drive-row'
   /** A bay with nothing in it. */
   | 'empty-bay'
@@ -37,7 +37,7 @@ export interface DrawnPort {
 }
 
 export interface DrawnNode {
-  /** Part id; `part~connector` for stubs; `case#slot` for empty bays. */
+  /** Part id; `part~connector` for stubs; `case#slot` for empty bays (`backplane#bay` where no case holds it). */
   id: string
   kind: DrawnNodeKind
   part: string
@@ -49,16 +49,26 @@ export interface DrawnNode {
   /** Bay number, for rows and empty bays. */
   slot?: number
   cage?: string
+  /** One line high: one connector on either side, level with the middle, and no room for their labels. */
+  compact?: true
+  /** Cases: names of cages, relative to the node, where the text begins. */
+  headings?: { text: string; x: number; y: number }[]
 }
 
 export interface DrawnRun {
-  /** Joint id; `inner:part:connector` for the stretch of a cable between its stub and its drive. */
+  /**
+   * Joint id, one run for each. Where a joint carries both, the run of that id is its data, and
+   * `inner:part:connector` its power: the stretch between a cable's stub and its drive, or a backplane's seat.
+   */
   id: string
+  /** The joint whose currents or lanes it shows. */
   joint?: string
   kind: 'joint' | 'inner' | 'seat'
   carries: 'power' | 'data'
   from: { node: string; port: string }
   to: { node: string; port: string }
+  /** Points that lead the run clear of the tags of columns that it passes, in order from `from`. */
+  via?: { x: number; y: number }[]
 }
 
 export interface Drawing {

@@ -1,0 +1,151 @@
+import type { ResolvedBuild, ResolvedPart } from '../build/resolve.ts'
+import { regionOf } from './carries.ts'
+import type { Drawing, DrawnNode } from './drawing.ts'
+import { facingOf, hostDistances } from './facing.ts'
+import { closeRanks, depthsOf } from './layers.ts'
+import { placeLoom, type Link } from './loom.ts'
+import { tag } from './metrics.ts'
+import { applyOwnPositions } from './positions.ts'
+import { makePowerTag, makeStubs, type LoomNode } from './powerLoom.ts'
+import { makeRuns, type PlacedRun } from './runs.ts'
+import { placeStrips } from './strips.ts'
+import { makeTag, noPlaces } from './tag.ts'
+
+/**
+ * The automatic arrangement of a build: strip of bays in the middle, power loom on the left, data loom on the right.
+ * A part's own position wins over the automatic one. The same build always gives the same drawing.
+ */
+export function arrange(build: ResolvedBuild): Drawing {
+  const places = noPlaces()
+  const strips = placeStrips(build, places)
+  const distances = hostDistances(build)
+  const power: LoomNode[] = []
+  const data: LoomNode[] = []
+  for (const part of build.parts) {
+    const region = regionOf(part)
+    if (region === 'power') power.push(makePowerTag(places, part))
+    if (region !== 'data') continue
+    const { left, right } = facingOf(part, distances)
+    data.push({ part, node: makeTag(places, part, 'data', left, right) })
+    power.push(...makeStubs(places, part))
+  }
+  const runs = makeRuns(build, places)
+  const bounds = boundsOf(strips)
+  placePowerLoom(power, runs, bounds)
+  placeDataLoom(data, runs, bounds)
+
+  const nodes = [...strips, ...power.map(({ node }) => node), ...data.map(({ node }) => node)]
+  const drawing: Drawing = { nodes, runs: runs.map(({ run }) => run), bounds }
+  applyOwnPositions(build, drawing)
+  drawing.bounds = boundsOf(nodes)
+  return drawing
+}
+
+type Bounds = Drawing['bounds']
+
+/** Columns by depth from the supply; the tails of cables stand nearest the strip. */
+function placePowerLoom(members: readonly LoomNode[], runs: readonly PlacedRun[], strip: Bounds): void {
+  const partOf = new Map(members.map(({ node, part }) => [node, part]))
+  const steps = runs.filter((run) => run.from.port.side === 'right' && run.to.port.side === 'left')
+  const leading = new Set(steps.map((run) => run.from.node))
+  const isTail = (node: DrawnNode) =>
+    node.kind === 'stub' && leading.has(node) && partOf.get(node)?.model.kind !== 'board'
+  const hasLeads = members.some(({ part }) => part.model.kind === 'lead')
+  const depths = depthsOf(
+    members.map(({ node }) => node),
+    steps.map((run) => ({ from: run.from.node, to: run.to.node })),
+    (node) => leastPowerDepth(partOf.get(node), hasLeads),
+  )
+  const deepest = Math.max(0, ...depths.values())
+  for (const node of depths.keys()) if (isTail(node)) depths.set(node, deepest + 1)
+  const ranks = closeRanks(depths)
+  const columns = mirrored(ranks)
+  const low = members.filter(({ node, part }) => (node.kind === 'stub' ? !isTail(node) : isConsumer(part)))
+  const homes = new Map(low.map(({ node }, i) => [node, strip.y + strip.height + 48 + i * 44]))
+  for (const { node, part } of members) if (part.model.kind === 'supply') homes.set(node, strip.y + node.height / 2)
+  placeLoom({
+    side: 'left',
+    edge: strip.x,
+    columns,
+    links: linksOf(steps, columns, 'left'),
+    homes,
+    floor: strip.y + strip.height + 48 + low.length * 44,
+  })
+}
+
+const isConsumer = (part: ResolvedPart): boolean => part.model.kind === 'fan' || part.model.kind === 'load'
+
+function leastPowerDepth(part: ResolvedPart | undefined, hasLeads: boolean): number {
+  switch (part?.model.kind) {
+    case 'supply':
+      return 0
+    case 'lead':
+      return 1
+    default:
+      return hasLeads ? 2 : 1
+  }
+}
+
+/** Columns by distance from the strip; boards stand outermost with their cards beside them. */
+function placeDataLoom(members: readonly LoomNode[], runs: readonly PlacedRun[], strip: Bounds): void {
+  const partOf = new Map(members.map(({ node, part }) => [node, part]))
+  const steps = runs.filter((run) => run.from.port.side === 'right' && run.to.port.side === 'left')
+  const isBoard = (node: DrawnNode) => partOf.get(node)?.model.kind === 'board'
+  const depths = depthsOf(
+    members.map(({ node }) => node),
+    steps.map((run) => ({ from: run.from.node, to: run.to.node })),
+    (node) => leastDataDepth(partOf.get(node)),
+  )
+  const outermost = Math.max(0, ...[...depths].map(([node, depth]) => (isBoard(node) ? depth : depth + 1)))
+  for (const node of depths.keys()) if (isBoard(node)) depths.set(node, outermost)
+  const columns = closeRanks(depths)
+  placeLoom({
+    side: 'right',
+    edge: strip.x + strip.width,
+    columns,
+    links: linksOf(steps, columns, 'right'),
+    homes: new Map(),
+    floor: strip.y + strip.height - tag.compactHeight / 2,
+  })
+}
+
+function leastDataDepth(part: ResolvedPart | undefined): number {
+  switch (part?.model.kind) {
+    case 'controller':
+    case 'expander':
+      return 1
+    case 'board':
+      return 2
+    default:
+      return 0
+  }
+}
+
+function mirrored(ranks: ReadonlyMap<DrawnNode, number>): Map<DrawnNode, number> {
+  const last = Math.max(0, ...ranks.values())
+  return new Map([...ranks].map(([node, rank]) => [node, last - rank]))
+}
+
+/** Runs that lie within one loom and lead away from the strip, column by column. */
+function linksOf(runs: readonly PlacedRun[], columns: ReadonlyMap<DrawnNode, number>, side: 'left' | 'right'): Link[] {
+  return runs.flatMap(({ run, from, to }) => {
+    const [near, far] = side === 'left' ? [to, from] : [from, to]
+    const column = columns.get(far.node)
+    const nearIsFrame = near.node.kind !== 'part' && near.node.kind !== 'stub'
+    if (column === undefined || !(nearIsFrame || columns.has(near.node))) return []
+    return (columns.get(near.node) ?? -1) < column ? [{ run, near, far }] : []
+  })
+}
+
+function boundsOf(nodes: readonly DrawnNode[]): Bounds {
+  let [left, top, right, bottom] = [Infinity, Infinity, -Infinity, -Infinity]
+  for (const { x, y, width, height } of nodes) {
+    left = Math.min(left, x)
+    top = Math.min(top, y)
+    right = Math.max(right, x + width)
+    bottom = Math.max(bottom, y + height)
+  }
+  return nodes.length === 0
+    ? { x: 0, y: 0, width: 0, height: 0 }
+    : { x: left, y: top, width: right - left, height: bottom - top }
+}

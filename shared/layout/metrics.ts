@@ -1,0 +1,52 @@
+/** Sizes of the arrangement, in pixels at zoom 1. All lie on the 4 px grid. */
+export const grid = 4
+
+/** Tags: supply, lead, splitter, breakout, controller and so on. */
+export const tag = {
+  width: 176,
+  supplyWidth: 216,
+  header: 28,
+  portPitch: 20,
+  footer: 8,
+  /** Lines of rail figures that stand beside a supply's sockets. */
+  supplyLines: 5,
+  /** A part with one connector on either side is one line high, so that a column of them keeps step with the rows. */
+  compactHeight: 36,
+} as const
+
+/** A power inlet of a part on the data side. */
+export const stub = { width: 104, height: 28, portPitch: 20 } as const
+
+/** The strip of bays. */
+export const strip = {
+  rowWidth: 264,
+  rowHeight: 44,
+  rowGap: 4,
+  framePad: 12,
+  caseHeader: 32,
+  cageHeader: 24,
+  cageGap: 8,
+  backplaneHeader: 24,
+  backplanePad: 8,
+  /** Room between a backplane's edge and its rows, where the seats are drawn. */
+  gutter: 28,
+  /** Inset of a seat's contact from the backplane's edge. */
+  seatInset: 8,
+  stackGap: 48,
+} as const
+
+/** The looms on both sides. */
+export const loom = {
+  /** Between two columns, and between the last column and the strip: room for a curve and its amperes. */
+  columnGap: 112,
+  /** Between two tags of one column. */
+  nodeGap: 20,
+  /** Where at least one of the two is one line high. */
+  compactGap: 12,
+  /** Between a passing run and a tag. */
+  laneGap: 12,
+  /** Between two passing runs. */
+  lanePitch: 16,
+} as const
+
+export const snap = (value: number): number => Math.round(value / grid) * grid
