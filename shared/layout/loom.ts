@@ -77,11 +77,12 @@ export function placeLoom(plan: LoomPlan): void {
 }
 
 /** The edge of each column that faces the strip. */
-function columnEdges({ side, edge }: LoomPlan, widths: readonly number[]): number[] {
+function columnEdges({ side, edge, columns }: LoomPlan, widths: readonly number[]): number[] {
   const sign = side === 'left' ? -1 : 1
+  const tailsOnly = [...columns].every(([node, column]) => column > 0 || node.kind === 'stub')
   let x = edge
-  return widths.map((width) => {
-    const own = x + sign * loom.columnGap
+  return widths.map((width, column) => {
+    const own = x + sign * (column === 0 && tailsOnly ? loom.tailGap : loom.columnGap)
     x = own + sign * width
     return own
   })

@@ -3,8 +3,8 @@ export const grid = 4
 
 /** Tags: supply, lead, splitter, breakout, controller and so on. */
 export const tag = {
-  width: 176,
-  supplyWidth: 216,
+  width: 164,
+  supplyWidth: 204,
   header: 28,
   portPitch: 20,
   footer: 8,
@@ -15,11 +15,11 @@ export const tag = {
 } as const
 
 /** A power inlet of a part on the data side. */
-export const stub = { width: 104, height: 28, portPitch: 20 } as const
+export const stub = { width: 92, height: 28, portPitch: 20 } as const
 
 /** The strip of bays. */
 export const strip = {
-  rowWidth: 264,
+  rowWidth: 248,
   rowHeight: 44,
   rowGap: 4,
   framePad: 12,
@@ -38,7 +38,9 @@ export const strip = {
 /** The looms on both sides. */
 export const loom = {
   /** Between two columns, and between the last column and the strip: room for a curve and its amperes. */
-  columnGap: 112,
+  columnGap: 92,
+  /** Between the tails of cables and their drives: nothing is written there. */
+  tailGap: 40,
   /** Between two tags of one column. */
   nodeGap: 20,
   /** Where at least one of the two is one line high. */

@@ -25,8 +25,9 @@ interface Spot {
 
 function placeGroup({ holder, rows }: RowGroup, places: Places, x: number, y: number) {
   const isCase = holder?.model.kind === 'case'
-  const rowsX = x + strip.framePad + strip.gutter
-  const width = strip.rowWidth + 2 * (strip.framePad + strip.gutter)
+  const gutter = rows.some(({ backplane }) => backplane) || !isCase ? strip.gutter : 0
+  const rowsX = x + strip.framePad + gutter
+  const width = strip.rowWidth + 2 * (strip.framePad + gutter)
   const cages = new Set(rows.map(({ cage }) => cage))
   const headings: { text: string; x: number; y: number }[] = []
   const spots: Spot[] = []
