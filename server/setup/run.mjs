@@ -11,11 +11,12 @@ const running = new Set()
  * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, uid?: number, gid?: number, show?: boolean, input?: string }} [options]
  * @returns {Promise<{ code: number, output: string }>}
  */
-export const run = (program, args, { show = false, input, ...options } = {}) =>
+export const run = (program, args, { show = false, input, env = process.env, ...options } = {}) =>
   new Promise((resolve) => {
     const child = spawn(program, args, {
       cwd: root,
       ...options,
+      env: show ? env : { ...env, NO_COLOR: '1' },
       stdio: show ? 'inherit' : [input === undefined ? 'ignore' : 'pipe', 'pipe', 'pipe'],
     })
     let output = ''

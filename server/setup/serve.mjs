@@ -41,6 +41,11 @@ export const spawnServer = ({ env, log }) => {
       await ended
       clearTimeout(insist)
     },
+    /** Ends the server as a power cut would. */
+    kill: async () => {
+      child.kill('SIGKILL')
+      await ended
+    },
   }
 }
 
