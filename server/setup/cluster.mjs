@@ -6,7 +6,7 @@ import { clusterAccount } from './account.mjs'
 import { debianPostgres } from './debianPostgres.mjs'
 import { clusterPlace } from './place.mjs'
 import { anyFreePort, isFree } from './ports.mjs'
-import { clearForeignPid, readPostmaster } from './postmaster.mjs'
+import { clearStalePid, readPostmaster, runsIn } from './postmaster.mjs'
 import { Refusal } from './refusal.mjs'
 import { run, tail } from './run.mjs'
 
@@ -47,7 +47,8 @@ const initialise = async (cluster) => {
 }
 
 /** @param {Cluster} cluster */
-const isRunning = async (cluster) => (await runPostgres(cluster, 'pg_ctl', ['status', '-D', cluster.data])).code === 0
+const isRunning = async (cluster) =>
+  runsIn(cluster.data) ?? (await runPostgres(cluster, 'pg_ctl', ['status', '-D', cluster.data])).code === 0
 
 /** The port of last time where it is still free: bookmarks of database tools go on working. @param {string} place */
 const choosePort = async (place) => {
@@ -77,7 +78,7 @@ const startOnce = async (cluster, settings) => {
  * @param {readonly string[]} settings
  */
 const start = async (cluster, settings) => {
-  clearForeignPid(cluster.data)
+  await clearStalePid(cluster.data)
   let complaint = ''
   for (let attempt = 1; attempt <= 5; attempt++) {
     const log = await startOnce(cluster, settings)
