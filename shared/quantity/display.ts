@@ -1,0 +1,38 @@
+import type { Quantity } from './quantity.ts'
+
+/** Units as they are written beside a figure. */
+export type Unit = 'A' | 'W' | 'V' | 'VA' | 'mm' | 'in' | 'mm²' | 'mΩ' | 'TB' | 'Gb/s' | 'MB/s' | 's' | 'h' | '%' | ''
+
+/** Four digits say more than any datasheet holds; fewer where the figure has fewer. */
+export function formatNumber(value: number, locale?: string): string {
+  const digits = Math.abs(value) >= 1000 ? { maximumFractionDigits: 0 } : { maximumSignificantDigits: 4 }
+  return new Intl.NumberFormat(locale, digits).format(value)
+}
+
+/** A number with its unit, held together by a space that does not break. */
+export function formatFigure(value: number, unit: Unit, locale?: string): string {
+  return unit === '' ? formatNumber(value, locale) : `${formatNumber(value, locale)}\u00a0${unit}`
+}
+
+/** True where the figure must be read with "about": guessed, a class's default, or from memory. */
+export const isAbout = (quantity: Quantity): boolean =>
+  quantity.origin === 'guess' || quantity.origin === 'class default' || quantity.fromMemory === true
+
+/** "1.7 to 2.2 A" where a range is stated and says more than the value. */
+export function formatRange(quantity: Quantity, unit: Unit, locale?: string): string | undefined {
+  const { low, high } = quantity
+  if (low === undefined && high === undefined) return undefined
+  if (low === undefined) return `up to ${formatFigure(high!, unit, locale)}`
+  if (high === undefined) return `from ${formatFigure(low, unit, locale)}`
+  return low === high ? undefined : `${formatNumber(low, locale)} to ${formatFigure(high, unit, locale)}`
+}
+
+export const millimetresPerInch = 25.4
+
+/** Lengths and areas in another unit: value and range are turned, the origin stays. */
+export function scaleQuantity(quantity: Quantity, factor: number): Quantity {
+  const scaled: Quantity = { ...quantity, value: quantity.value === null ? null : quantity.value * factor }
+  if (quantity.low !== undefined) scaled.low = quantity.low * factor
+  if (quantity.high !== undefined) scaled.high = quantity.high * factor
+  return scaled
+}

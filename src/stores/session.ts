@@ -1,0 +1,86 @@
+import { defineStore } from 'pinia'
+import { computed, ref } from 'vue'
+import type { Session, User } from '#shared/contract/session.ts'
+import * as accounts from '../api/accounts.ts'
+import * as api from '../api/session.ts'
+
+/** Who is signed in here. */
+export const useSessionStore = defineStore('session', () => {
+  const session = ref<Session>()
+  const user = computed<User | null>(() => session.value?.user ?? null)
+  const isAdministrator = computed(() => user.value?.role === 'administrator')
+  const editsCatalog = computed(() => isAdministrator.value || user.value?.role === 'catalog-editor')
+
+  /** The session ended under a page in use. The page stays as it is, unsaved work included. */
+  const hasEnded = ref(false)
+  /** The dialog over the page is open; settles when the person signs in again or declines. */
+  const asksAgain = ref(false)
+  let answerAgain: ((signedIn: boolean) => void) | undefined
+  let again: Promise<boolean> | undefined
+
+  async function load(): Promise<void> {
+    session.value = await api.readSession()
+  }
+
+  /** Loads once; later calls are free. */
+  async function ensure(): Promise<void> {
+    if (!session.value) await load()
+  }
+
+  async function signIn(email: string, password: string): Promise<void> {
+    session.value = await api.signIn(email, password)
+    settleAgain(true)
+  }
+
+  async function register(account: { email: string; name: string; password: string }): Promise<void> {
+    session.value = await accounts.register(account)
+  }
+
+  async function signOut(): Promise<void> {
+    await api.signOut()
+    await load()
+  }
+
+  function rename(renamed: User): void {
+    if (session.value) session.value = { ...session.value, user: renamed }
+  }
+
+  /** Asks to sign in over the page, once for all requests refused meanwhile; not again once it was declined. */
+  function signInAgain(): Promise<boolean> {
+    if (!user.value || (hasEnded.value && !asksAgain.value)) return Promise.resolve(false)
+    return askAgain()
+  }
+
+  function askAgain(): Promise<boolean> {
+    hasEnded.value = true
+    asksAgain.value = true
+    again ??= new Promise<boolean>((resolve) => (answerAgain = resolve))
+    return again
+  }
+
+  function settleAgain(signedIn: boolean): void {
+    if (signedIn) hasEnded.value = false
+    asksAgain.value = false
+    answerAgain?.(signedIn)
+    answerAgain = undefined
+    again = undefined
+  }
+
+  return {
+    session,
+    user,
+    isAdministrator,
+    editsCatalog,
+    hasEnded,
+    asksAgain,
+    load,
+    ensure,
+    signIn,
+    register,
+    signOut,
+    rename,
+    signInAgain,
+    askAgain,
+    settleAgain,
+  }
+})
