@@ -6,7 +6,9 @@ const described = [...readText('.env.example').matchAll(/^#?([A-Z][A-Z_]+)=/gm)]
 
 /** Settings that only set-up reads, from its own sources. */
 const readBySetup = filesBelow('server/setup')
-  .flatMap((file) => [...readText(file).matchAll(/process\.env(?:\.|\[')([A-Z][A-Z_]+)/g)].map(([, name]) => name ?? ''))
+  .flatMap((file) =>
+    [...readText(file).matchAll(/process\.env(?:\.|\[')([A-Z][A-Z_]+)/g)].map(([, name]) => name ?? ''),
+  )
   .filter((name) => name !== 'PATH')
 
 describe('settings', () => {

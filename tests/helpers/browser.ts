@@ -20,6 +20,8 @@ export interface TestBrowser {
   newContext(options?: BrowserContextOptions): Promise<BrowserContext>
   /** Says that this test brings about a complaint of the page that matches, as a refused request. */
   expectComplaint(pattern: RegExp): void
+  /** What the pages of this test complained of so far. */
+  complaints(): readonly string[]
 }
 
 /**
@@ -79,5 +81,6 @@ export function useBrowser(): TestBrowser {
     newContext,
     newPage: async (options) => (await newContext(options)).newPage(),
     expectComplaint: (pattern) => void expected.push(pattern),
+    complaints: () => complaints,
   }
 }
