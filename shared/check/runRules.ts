@@ -2,7 +2,7 @@ import type { CatalogIndex } from '../catalog/catalog.ts'
 import type { RawFinding, Rule, RuleContext, RuleMeta } from '../rules/rule.ts'
 import { findingKey } from './keys.ts'
 import type { Finding } from './result.ts'
-import { buildSubject } from './subjects.ts'
+import { buildSubject, inOrder } from './subjects.ts'
 
 /**
  * Runs every rule and puts its findings into words. A rule that breaks takes only itself down, and never silently: a
@@ -25,7 +25,7 @@ function toFinding(rule: Rule, raw: RawFinding<unknown>, context: RuleContext): 
     key: findingKey(context.build, rule.meta.id, raw.subjects, raw.detail),
     rule: rule.meta.id,
     severity: raw.severity,
-    subjects: raw.subjects,
+    subjects: inOrder(raw.subjects),
     ...(raw.moment === undefined ? {} : { moment: raw.moment }),
     ...(raw.load === undefined ? {} : { load: raw.load }),
     ...(raw.limit === undefined ? {} : { limit: raw.limit }),

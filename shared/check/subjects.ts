@@ -1,3 +1,4 @@
+import { compareRefs } from '../build/refOrder.ts'
 import type { ResolvedConnector, ResolvedJoint, ResolvedPart } from '../build/resolve.ts'
 import type { Subject } from './result.ts'
 
@@ -13,13 +14,25 @@ export const connectorSubject = ({ part, connector }: ResolvedConnector): Subjec
   connector: connector.id,
 })
 
-/** A joint, filed under the part at its first end. */
-export const jointSubject = ({ joint, a }: ResolvedJoint): Subject => ({
-  kind: 'joint',
-  joint: joint.id,
-  part: a.part.part.id,
-  ref: a.part.part.ref,
-})
+/** A joint, filed under the end whose designation comes first, whichever way round it was drawn. */
+export function jointSubject({ joint, a, b }: ResolvedJoint): Subject {
+  const { part } = compareRefs(a.part.part.ref, b.part.part.ref) <= 0 ? a.part : b.part
+  return { kind: 'joint', joint: joint.id, part: part.id, ref: part.ref }
+}
+
+/** The first subject is what a finding is filed under; the others follow in an order that lists cannot shift. */
+export function inOrder(subjects: readonly Subject[]): Subject[] {
+  const [first, ...others] = subjects
+  if (!first) return []
+  return [
+    first,
+    ...others.sort(
+      (a, b) => compareRefs(a.ref ?? '', b.ref ?? '') || compareText(a.connector ?? '', b.connector ?? ''),
+    ),
+  ]
+}
+
+const compareText = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 0)
 
 export const conductorSubject = ({ part }: ResolvedPart, index: number): Subject => ({
   kind: 'conductor',
