@@ -7,6 +7,14 @@ export const buildRoles = ['owner', 'editor', 'reviewer', 'reader'] as const
 export const buildRoleSchema = z.enum(buildRoles)
 export type BuildRole = z.infer<typeof buildRoleSchema>
 
+/** What each role may do, for mails and screens. */
+export const roleWords: Readonly<Record<BuildRole, string>> = {
+  owner: 'you may change everything, invite people and archive the build',
+  editor: 'you may change the diagram',
+  reviewer: 'you may read everything and give a verdict',
+  reader: 'you may read everything',
+}
+
 /** A build in the list. `worst` is null where all is within the stated limits. */
 export const buildSummarySchema = z.object({
   id: z.string(),
@@ -17,6 +25,8 @@ export const buildSummarySchema = z.object({
   parts: z.number(),
   worst: severitySchema.nullable(),
   counts: z.object({ danger: z.number(), fault: z.number(), caution: z.number(), note: z.number() }),
+  /** False while a large build's newest revision is still being checked: `worst` and `counts` are then older. */
+  checked: z.boolean(),
   changedAt: z.string(),
   changedBy: z.string().nullable(),
   archived: z.boolean(),
@@ -79,7 +89,8 @@ export const saveConflictSchema = z.object({
   revision: z.number(),
   /** Edits of others since `base`. */
   theirs: z.array(editSchema),
-  /** Ids of parts, joints or fields that both touched. */
+  /** What both touched, as "parts/p7", "parts/p7/serial", "joints/j3", "refs/W6", "models/x", "accepted/key",
+   *  "build/name", "settings": see `shared/build/touch.ts`. Empty where the edits no longer fit for another reason. */
   clashes: z.array(z.string()),
   document: z.unknown(),
 })
@@ -92,6 +103,11 @@ export const revisionSchema = z.object({
   hash: z.string(),
 })
 export type Revision = z.infer<typeof revisionSchema>
+
+/** GET /api/builds/:id/revisions */
+export const listRevisionsQuerySchema = z.strictObject({ page: z.coerce.number().int().min(1).max(100_000).default(1) })
+/** GET /api/builds/:id/revisions/:revision */
+export const openRevisionSchema = z.object({ revision: revisionSchema, document: z.unknown() })
 
 export const memberSchema = z.object({
   user: userSchema.pick({ id: true, name: true, email: true }),
@@ -119,3 +135,5 @@ export const invitationViewSchema = z.object({
   email: z.string(),
   invitedBy: z.string(),
 })
+/** What accepting an invitation leads to. */
+export const acceptedInvitationSchema = z.object({ buildId: z.string() })

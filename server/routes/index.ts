@@ -1,0 +1,32 @@
+import { accountRoutes } from './accounts.ts'
+import { buildRoutes } from './builds.ts'
+import { catalogRoutes } from './catalog.ts'
+import { checkRoutes } from './checks.ts'
+import { healthRoutes } from './health.ts'
+import { invitationRoutes } from './invitations.ts'
+import { mailboxRoutes } from './mailbox.ts'
+import { memberRoutes } from './members.ts'
+import { openApiRoute } from './openApi.ts'
+import { ownModelRoutes } from './ownModels.ts'
+import { revisionRoutes } from './revisions.ts'
+import type { AnyRoute } from './route.ts'
+import { sessionRoutes } from './sessions.ts'
+import { userRoutes } from './users.ts'
+
+const resources: readonly AnyRoute[] = [
+  ...healthRoutes,
+  ...sessionRoutes,
+  ...accountRoutes,
+  ...userRoutes,
+  ...mailboxRoutes,
+  ...buildRoutes,
+  ...revisionRoutes,
+  ...memberRoutes,
+  ...invitationRoutes,
+  ...catalogRoutes,
+  ...ownModelRoutes,
+  ...checkRoutes,
+]
+
+/** The whole route table. What is not in it does not exist. */
+export const routes: readonly AnyRoute[] = [...resources, openApiRoute(resources)]

@@ -1,0 +1,107 @@
+import { createHash } from 'node:crypto'
+import { QueryTypes, type Sequelize } from 'sequelize'
+import { indexCatalog, type Catalog, type CatalogIndex } from '#shared/catalog/catalog.ts'
+import type { Model } from '#shared/catalog/model.ts'
+import { takeLock } from '../db/lock.ts'
+import { CatalogRevision } from '../models/index.ts'
+import { Refusal } from './refusal.ts'
+
+/** The shared catalog as it stands: shipped files with the editors' models over them. */
+export interface CurrentCatalog {
+  data: Catalog
+  index: CatalogIndex
+  /** The same text for the same content, for the ETag. */
+  version: string
+  /** The data as JSON, made once. */
+  json: string
+}
+
+export interface CatalogService {
+  /** The catalog now. Edits made through another process are seen too. */
+  current(): Promise<CurrentCatalog>
+  putModel(model: Model, authorId: string, note: string | null): Promise<Model>
+}
+
+/** Keeps the catalog in memory, and makes it anew when the database holds an edit that it has not seen. */
+export function makeCatalogService(database: Sequelize, shipped: Catalog): CatalogService {
+  let made: { newest: string; catalog: CurrentCatalog } | undefined
+
+  async function current(): Promise<CurrentCatalog> {
+    const newest = await newestEdit(database)
+    if (made?.newest !== newest) made = { newest, catalog: assemble(shipped, await editedModels(database)) }
+    return made.catalog
+  }
+
+  return {
+    current,
+    async putModel(model, authorId, note) {
+      await database.transaction(async (transaction) => {
+        await takeLock(database, 'catalog', transaction)
+        refuseUnfit(model, (await current()).index)
+        await CatalogRevision.create({ modelId: model.id, model, note, authorId }, { transaction })
+      })
+      return model
+    },
+  }
+}
+
+/** A model must use connector types and sources that are there, and keep the connectors that builds may be joined to. */
+function refuseUnfit(model: Model, index: CatalogIndex): void {
+  const errors = [...missingReferences(model, index, 'model'), ...lostConnectors(model, index.models.get(model.id))]
+  if (errors.length > 0) throw new Refusal('bad-input', { errors })
+}
+
+/** References of a model that lead nowhere, by their place under `at`. */
+export function missingReferences(model: Model, index: CatalogIndex, at: string): { path: string; message: string }[] {
+  const errors: { path: string; message: string }[] = []
+  model.connectors.forEach((connector, i) => {
+    if (!index.connectorTypes.has(connector.type))
+      errors.push({
+        path: `${at}.connectors[${i}].type`,
+        message: `the catalog has no connector type "${connector.type}"`,
+      })
+  })
+  model.sources.forEach((source, i) => {
+    if (!index.sources.has(source))
+      errors.push({ path: `${at}.sources[${i}]`, message: `the catalog has no source "${source}"` })
+  })
+  if (model.class !== undefined && !index.classes.has(model.class))
+    errors.push({ path: `${at}.class`, message: `the catalog has no class "${model.class}"` })
+  return errors
+}
+
+function lostConnectors(model: Model, before: Model | undefined): { path: string; message: string }[] {
+  if (!before) return []
+  const kept = new Set(model.connectors.map((connector) => connector.id))
+  return before.connectors
+    .filter((connector) => !kept.has(connector.id))
+    .map(({ id }) => ({
+      path: 'model.connectors',
+      message: `connector "${id}" has to stay: builds may be joined to it`,
+    }))
+}
+
+async function newestEdit(database: Sequelize): Promise<string> {
+  const rows = await database.query<{ newest: string }>(
+    'SELECT coalesce(max(id), 0)::text AS newest FROM catalog_revisions',
+    { type: QueryTypes.SELECT },
+  )
+  return rows[0]?.newest ?? '0'
+}
+
+async function editedModels(database: Sequelize): Promise<Model[]> {
+  const rows = await database.query<{ model: Model }>(
+    'SELECT DISTINCT ON (model_id) model FROM catalog_revisions ORDER BY model_id, id DESC',
+    { type: QueryTypes.SELECT },
+  )
+  return rows.map((row) => row.model)
+}
+
+function assemble(shipped: Catalog, edited: readonly Model[]): CurrentCatalog {
+  const models = new Map(shipped.models.map((model) => [model.id, model]))
+  for (const model of edited) models.set(model.id, model)
+  const data: Catalog = { ...shipped, models: [...models.values()] }
+  const json = JSON.stringify(data)
+  const version = createHash('sha256').update(json).digest('base64url').slice(0, 24)
+  return { data, index: indexCatalog(data), version, json }
+}
