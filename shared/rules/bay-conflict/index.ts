@@ -9,7 +9,7 @@ type Facts =
   | { kind: 'elsewhere'; drive: ResolvedPart; slot: number; backplane: ResolvedPart; served: number }
   | { kind: 'backplanes'; case: ResolvedPart; slot: number; backplanes: readonly ResolvedPart[] }
 
-export default defineRule<Facts>({
+export const bayConflict = defineRule<Facts>({
   meta: {
     id: 'bay-conflict',
     title: 'Two things in one bay',

@@ -11,7 +11,7 @@ interface Facts {
   bay: Bay
 }
 
-export default defineRule<Facts>({
+export const baySize = defineRule<Facts>({
   meta: {
     id: 'bay-size',
     title: 'A drive that does not fit its bay',

@@ -9,7 +9,7 @@ interface Facts {
   drives: readonly ResolvedPart[]
 }
 
-export default defineRule<Facts>({
+export const breakoutReversed = defineRule<Facts>({
   meta: {
     id: 'breakout-reversed',
     title: 'Breakout for the other direction',
@@ -17,7 +17,7 @@ export default defineRule<Facts>({
     finds: 'A forward breakout where a reverse one is needed, or the other way round.',
     why: 'Both kinds look alike and fit alike, yet they swap transmit and receive: with the wrong one all its links stay dark, without any error message.',
     needs: ['lanes from every controller', 'direction of each cable'],
-    sources: ['sas-1.1', 'drive-connector-pins'],
+    sources: ['R2', 'R7'],
     commonPractice: true,
   },
   check({ data }) {

@@ -17,7 +17,7 @@ interface Facts {
 /** What 32-bit block numbers reach with 512-byte sectors: 2^32 x 512 bytes. */
 export const blockLimit512_TB = (2 ** 32 * 512) / 1e12
 
-export default defineRule<Facts>({
+export const capacityCeiling = defineRule<Facts>({
   meta: {
     id: 'capacity-ceiling',
     title: 'A drive larger than its controller addresses',
@@ -25,7 +25,7 @@ export default defineRule<Facts>({
     finds: 'A drive with more capacity than its controller can address.',
     why: 'Block numbers of 32 bits end at 2.2 TB with 512-byte sectors: a larger drive is seen short, or not at all, and an array made on it is lost when the controller is changed.',
     needs: ['largest capacity of each controller', 'capacity and sector size of each drive'],
-    sources: ['anandtech-2.19tb', 'sas-controller-memo'],
+    sources: ['R68', 'R67'],
   },
   check({ data }) {
     return data.controllers.flatMap((controller) => {

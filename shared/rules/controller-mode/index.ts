@@ -10,7 +10,7 @@ interface Facts {
   drives: readonly ResolvedPart[]
 }
 
-export default defineRule<Facts>({
+export const controllerMode = defineRule<Facts>({
   meta: {
     id: 'controller-mode',
     title: 'Array needs pass-through',
@@ -18,7 +18,7 @@ export default defineRule<Facts>({
     finds: 'An array that needs drives passed through, on a controller that combines drives itself.',
     why: 'A controller that combines drives hides serials, health and sector sizes from the system and writes its own marks on the drives: the array software cannot do its work, and the drives cannot be moved to another controller.',
     needs: ['settings: array needs pass-through', 'modes of each controller', 'mode that this one is set to'],
-    sources: ['openzfs-hardware', 'openzfs-14458'],
+    sources: ['R63', 'R75'],
     disputed:
       'Some controllers offer a mode that hands on single drives beside combined ones; projects disagree whether that is enough.',
   },

@@ -8,7 +8,7 @@ type Facts =
   | { kind: 'twice'; drive: ResolvedPart; paths: readonly LanePath[]; bothWork: boolean }
   | { kind: 'loop'; expander: ResolvedPart; controller: ResolvedPart }
 
-export default defineRule<Facts>({
+export const doubledDataPath = defineRule<Facts>({
   meta: {
     id: 'doubled-data-path',
     title: 'A drive port reached twice',
@@ -17,7 +17,7 @@ export default defineRule<Facts>({
       'A drive port that two controllers or two ports reach without the drive being dual-ported, or expanders joined in a ring.',
     why: 'A SATA drive, and each single port of a SAS drive, belongs to one initiator; a second way in blocks or disturbs the first. A ring of expanders is an error of the whole domain.',
     needs: ['lanes from every controller', 'ports of each drive'],
-    sources: ['sas-affiliation', 'sas-expander-errors', 'hp-sas-p4'],
+    sources: ['R61', 'R69', 'R54'],
   },
   check({ data }) {
     return [...twice(data), ...loops(data)]

@@ -8,7 +8,7 @@ type Facts =
   | { kind: 'missing'; drives: readonly ResolvedPart[]; all: number }
   | { kind: 'twice'; serial: string; parts: readonly ResolvedPart[] }
 
-export default defineRule<Facts>({
+export const identity = defineRule<Facts>({
   meta: {
     id: 'identity',
     title: 'Serial missing or twice',
@@ -16,7 +16,7 @@ export default defineRule<Facts>({
     finds: 'Drives without a serial number, and parts that carry the same one.',
     why: 'The system names a failed drive by its serial: only with it on the plan does the right drive get pulled out.',
     needs: ['serial of each part'],
-    sources: ['smartmontools'],
+    sources: ['R74'],
   },
   check({ build }) {
     const parts = [...build.parts].sort(byRef)

@@ -12,7 +12,7 @@ interface Facts {
   limit: LengthLimit
 }
 
-export default defineRule<Facts>({
+export const linkTooLong = defineRule<Facts>({
   meta: {
     id: 'link-too-long',
     title: 'Data link too long',
@@ -20,7 +20,7 @@ export default defineRule<Facts>({
     finds: 'Cables of one data link that are together longer than the limit for their protocol and rate.',
     why: 'Every passive part of a link takes some of the signal. A link that is too long drops to a lower rate, collects errors, or stays dark.',
     needs: ['lanes from every controller', 'length of each cable', 'protocol and rate of the link'],
-    sources: ['sata-cable-length', 'sata-cables-note', 'esata', 'sas-active-cable-keying'],
+    sources: ['R38', 'R4', 'R5', 'R23'],
     disputed:
       'No standard states metres for internal SAS cables, only a budget of loss: 1 m is what is sold and supported. The limits for 12 Gb/s external cables and for NVMe cables are common practice too.',
   },

@@ -6,7 +6,7 @@ import { defineRule, type RawFinding } from '../rule.ts'
 
 type Facts = { kind: 'cut'; link: SharedLink; lost: HoursLost | null } | { kind: 'no slot'; link: SharedLink }
 
-export default defineRule<Facts>({
+export const narrowSlot = defineRule<Facts>({
   meta: {
     id: 'narrow-slot',
     title: 'A slot narrower than its card',
@@ -14,7 +14,7 @@ export default defineRule<Facts>({
     finds: 'A controller card in a slot with fewer lanes or an older generation than the card, with what it costs.',
     why: 'All drives of the card share the slot. A slot can be longer than it is wired: what counts are its electrical lanes and its generation.',
     needs: ['slot of each controller card', 'lanes and generation of slot and card', 'rates of the drives'],
-    sources: ['pcie-table'],
+    sources: ['R37'],
   },
   check({ data }) {
     return data.shared.flatMap((link) => (link.kind === 'slot' ? slotFinding(data, link) : []))

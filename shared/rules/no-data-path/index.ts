@@ -16,7 +16,7 @@ interface Facts {
     | { kind: 'other'; part: ResolvedPart }
 }
 
-export default defineRule<Facts>({
+export const noDataPath = defineRule<Facts>({
   meta: {
     id: 'no-data-path',
     title: 'A drive that no controller reaches',
@@ -24,7 +24,7 @@ export default defineRule<Facts>({
     finds: 'A drive whose data connector leads to no controller.',
     why: 'Without a data path the system will not see the drive, whatever its power looks like.',
     needs: ['lanes from every controller'],
-    sources: ['sas-1.1'],
+    sources: ['R2'],
   },
   check({ build, data }) {
     const lost = build.parts.filter((part) => part.model.drive && data.pathsOf(part).length === 0)

@@ -12,7 +12,7 @@ interface Facts {
   largest_TB: number
 }
 
-export default defineRule<Facts>({
+export const parityTooSmall = defineRule<Facts>({
   meta: {
     id: 'parity-too-small',
     title: 'Redundancy drive too small',

@@ -15,7 +15,7 @@ interface Facts {
 
 const protocolNames: Readonly<Record<Protocol, string>> = { sata: 'SATA', sas: 'SAS', nvme: 'NVMe' }
 
-export default defineRule<Facts>({
+export const protocolMismatch = defineRule<Facts>({
   meta: {
     id: 'protocol-mismatch',
     title: 'A part that does not speak the drive’s protocol',
@@ -23,7 +23,7 @@ export default defineRule<Facts>({
     finds: 'A drive whose protocol some part of its path does not speak, such as a SAS drive behind a SATA port.',
     why: 'Adapters and cables only change the shape of the plug: a SAS controller takes SATA drives too, but a SATA port never takes a SAS drive, and only NVMe ports take NVMe drives.',
     needs: ['lanes from every controller', 'protocols of controllers, expanders and drives'],
-    sources: ['sas-sata-common-connector', 'sas-1.1', 'openzfs-hardware'],
+    sources: ['R29', 'R2', 'R63'],
   },
   check({ data }) {
     return [...groups(data).values()].map((facts) => ({

@@ -15,7 +15,7 @@ interface Facts {
   drives: ResolvedPart[]
 }
 
-export default defineRule<Facts>({
+export const sectorFormat = defineRule<Facts>({
   meta: {
     id: 'sector-format',
     title: 'Sectors that the system will not take',
@@ -24,7 +24,7 @@ export default defineRule<Facts>({
       'Drives with 520- or 528-byte sectors, sectors that their controller does not hand on, or sectors with protection information.',
     why: 'Drives from storage arrays are often formatted with sectors of 520 or 528 bytes: the system then shows a drive of size zero. They are sound, but need a low-level format that takes hours and erases them.',
     needs: ['logical and physical sector size of each drive', 'sector sizes that controllers hand on'],
-    sources: ['sectors-520-log', 'sectors-520-use', 'sg-format'],
+    sources: ['R70', 'R71', 'R72'],
   },
   check({ build, data }) {
     return [...groups([...build.parts].sort(byRef), data).values()].map((facts) => ({

@@ -16,7 +16,7 @@ type Facts =
   | { kind: 'splitter'; loss: Loss; bears: number }
   | { kind: 'others'; losses: readonly Loss[]; members: number; bears: number }
 
-export default defineRule<Facts>({
+export const sharedFate = defineRule<Facts>({
   meta: {
     id: 'shared-fate',
     title: 'One part that takes too much of the array with it',

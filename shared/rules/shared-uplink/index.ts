@@ -10,7 +10,7 @@ interface Facts {
   lost: HoursLost
 }
 
-export default defineRule<Facts>({
+export const sharedUplink = defineRule<Facts>({
   meta: {
     id: 'shared-uplink',
     title: 'A scan slowed by a shared link',
@@ -19,7 +19,7 @@ export default defineRule<Facts>({
       'A link to an expander, or a controller’s own way to the processor, that slows a full scan, with the hours lost.',
     why: 'When every drive reads at once, as an array check and a rebuild do, the drives share this link evenly and the slowest share sets the pace of all.',
     needs: ['lanes from every controller', 'rates of links and drives', 'capacity and track rates of the drives'],
-    sources: ['hp-sas-p4', 'sata-rates', 'pcie-table', 'deskstar-7k500'],
+    sources: ['R54', 'R33', 'R37', 'R129'],
     disputed:
       'Whether 6 Gb/s drives behind a 12 Gb/s expander can fill its uplink hangs on buffering in the expander: without it they share it at 6 Gb/s, half of what is reckoned here.',
   },

@@ -22,7 +22,7 @@ interface Counted {
   drives: Set<ResolvedPart>
 }
 
-export default defineRule<Facts>({
+export const tooManyDevices = defineRule<Facts>({
   meta: {
     id: 'too-many-devices',
     title: 'More drives than can be addressed',
@@ -30,7 +30,7 @@ export default defineRule<Facts>({
     finds: 'More drives behind a controller or expander than it can address.',
     why: 'Drives past the limit are not seen, and which ones drop out can change from start to start.',
     needs: ['lanes from every controller', 'largest number of devices of controllers and expanders'],
-    sources: ['adaptec-a-p72', 'oracle-6gb-hba', 'port-multiplier'],
+    sources: ['R53', 'R56', 'R64'],
   },
   check({ data }) {
     return counts(data).flatMap(({ part, id, name, limit, drives }) => {

@@ -9,7 +9,7 @@ type Facts =
   | { kind: 'outputs'; joint: ResolvedJoint }
   | { kind: 'crowded'; connector: ResolvedConnector; joints: readonly ResolvedJoint[] }
 
-export default defineRule<Facts>({
+export const wrongMating = defineRule<Facts>({
   meta: {
     id: 'wrong-mating',
     title: 'Connectors that do not mate',
@@ -17,7 +17,7 @@ export default defineRule<Facts>({
     finds: 'A joint whose connector types, sides or keys do not mate, or a connector that is joined twice.',
     why: 'A joint that cannot be made in the hand carries nothing here: whatever hangs on it counts as unconnected.',
     needs: ['joints', 'connector types: what mates with what', 'supply outlets'],
-    sources: ['sas-1.1', 'ses-connector-types', 'sas-sata-common-connector'],
+    sources: ['R2', 'R1', 'R29'],
   },
   check({ build }) {
     return [...wrongJoints(build), ...crowdedConnectors(build)]
