@@ -55,25 +55,27 @@ await main(
     await step('packages', installPackages)
     const database = await step('database', openDatabase)
     closeAtEnd(database.close)
+    const port = process.env['PORT'] ? Number(process.env['PORT']) : await nextFreePort(4780)
+    const url = `http://127.0.0.1:${port}`
     const apiPort = await anyFreePort()
     const api = `http://127.0.0.1:${apiPort}`
     const server = restartingServer({
       DATABASE_URL: database.url,
       HOST: '127.0.0.1',
       PORT: String(apiPort),
+      PUBLIC_URL: process.env['PUBLIC_URL'] || url,
       BAYLOOM_PREPARE: '1',
     })
     closeAtEnd(server.stop)
     await waitUntilReady(api, server.first)
     const { createServer } = await import('vite')
-    const port = process.env['PORT'] ? Number(process.env['PORT']) : await nextFreePort(4780)
     const pages = await createServer({
       root,
       server: { host: '127.0.0.1', port, strictPort: true, proxy: { '/api': api } },
     })
     await pages.listen()
     closeAtEnd(() => pages.close())
-    about.address = `http://127.0.0.1:${port}`
+    about.address = url
     console.log(`\n  Pages with hot reload: ${about.address}\n  Server: ${api}\n  Ctrl-C stops both.\n`)
     return new Promise(() => {})
   },
