@@ -2,9 +2,18 @@ import type { ResolvedConnector, ResolvedJoint, ResolvedPart } from '../build/re
 import type { Conductor, SupplyGroup, SupplyRail } from '../catalog/model.ts'
 import type { Figure, MomentId } from '../check/result.ts'
 import type { Line, Rail } from '../quantity/rails.ts'
+import type { Draw } from './attach.ts'
+import type { PowerNetwork } from './network.ts'
+import type { StartPlan } from './startPlan.ts'
 
 /** One value a moment, in the order of `momentIds`. Moments that do not apply hold NaN-free zeros and are not judged. */
 export type PerMoment = Float64Array
+
+/** What a load or limit may be when every figure behind it lies at its low or its high end. */
+export interface LoadRange {
+  low: PerMoment
+  high: PerMoment
+}
 
 /** The contacts of one joint that carry one line. */
 export interface ContactLoad {
@@ -14,8 +23,14 @@ export interface ContactLoad {
   contacts: number
   /** Signed from end a to end b. */
   current_A: PerMoment
+  /** Magnitudes. */
+  range_A: LoadRange
+  /** With contacts as new. */
+  resistance_ohm: number
   /** Sustained limit of all contacts together; null where the rating is unknown. */
   limit_A: number | null
+  /** The same at the low end of the rating. */
+  limitLow_A: number | null
   /** Side whose rating is lower. */
   weaker: ResolvedConnector
   rating: Figure | null
@@ -30,9 +45,12 @@ export interface ConductorLoad {
   index: number
   /** Signed along the conductor's `from` to `to`. */
   current_A: PerMoment
+  range_A: LoadRange
+  /** As it counts in the sums: zero where the supply's tolerance holds at the end of its own leads. */
   resistance_ohm: number
   /** What the whole conductor may carry; null where unknown or a board plane without a figure. */
   limit_A: number | null
+  limitLow_A: number | null
   ampacity: Figure | null
   about: boolean
 }
@@ -41,6 +59,7 @@ export interface SupplyRailLoad {
   part: ResolvedPart
   rail: SupplyRail
   current_A: PerMoment
+  range_A: LoadRange
   about: boolean
 }
 
@@ -48,6 +67,7 @@ export interface SupplyGroupLoad {
   part: ResolvedPart
   group: SupplyGroup
   load: PerMoment
+  range: LoadRange
   unit: 'W' | 'A'
   about: boolean
 }
@@ -55,6 +75,7 @@ export interface SupplyGroupLoad {
 export interface SupplyTotalLoad {
   part: ResolvedPart
   load_W: PerMoment
+  range_W: LoadRange
   about: boolean
 }
 
@@ -66,8 +87,12 @@ export interface DeviceLoad {
   current_A: PerMoment
   /** Supply rails that reach it; empty: the rail does not arrive. */
   fedBy: readonly { part: ResolvedPart; rail: SupplyRail }[]
-  /** Meaningless (zero) where `fedBy` is empty. */
+  /** Share of the part's current on this rail that it takes at this connector, 0 to 1. */
+  share: number
+  /** Lowest of the moment, contacts as new. Meaningless (zero) where `fedBy` is empty. */
   voltage_V: PerMoment
+  /** The same with every contact at the end of its life. */
+  aged_V: PerMoment
   drop_V: { wire: PerMoment; contact: PerMoment; return: PerMoment }
   /** Figures that its current at each moment was taken from. */
   figures: Partial<Record<MomentId, Figure>>
@@ -104,6 +129,10 @@ export interface PowerResult {
   devices: readonly DeviceLoad[]
   problems: readonly NetworkProblem[]
   timeline: readonly StageStep[]
-  /** For each connector index and rail: the supply rails that reach it, as `connectorIndex` -> rails. */
+  startPlan: StartPlan
+  network: PowerNetwork
+  /** Every place where a device takes current, whether or not it flows. */
+  draws: readonly Draw[]
+  /** A supply rail reaches this connector. */
   reaches(connector: ResolvedConnector, rail: Rail): boolean
 }

@@ -1,0 +1,58 @@
+import { branchCurrents, branchRange, islandOf, type SolvedLine } from './branchValues.ts'
+import type { Islands } from './islands.ts'
+import type { ConductorLoad, ContactLoad } from './result.ts'
+
+/** What every contact and conductor carries. */
+export function branchLoads(
+  solved: readonly SolvedLine[],
+  islands: Islands,
+): { contacts: ContactLoad[]; conductors: ConductorLoad[] } {
+  const contacts: ContactLoad[] = []
+  const conductors: ConductorLoad[] = []
+  for (const line of solved) {
+    const { network } = line
+    network.branches.forEach((branch, i) => {
+      if (branch.kind === 'feed') return
+      const island = islandOf(line, i, islands)
+      const loaded = island && island.draws.length > 0 ? island : undefined
+      const current_A = branchCurrents(line, i, loaded)
+      const range_A = branchRange(line, i, loaded)
+      const resistance_ohm = network.new_ohm[i]!
+      const about = line.about[i] === 1
+      if (branch.kind === 'wire') {
+        const { part, conductor, index, figures } = branch
+        const { limit } = figures
+        conductors.push({
+          part,
+          conductor,
+          index,
+          current_A,
+          range_A,
+          resistance_ohm,
+          limit_A: limit?.value ?? null,
+          limitLow_A: limit?.low ?? null,
+          ampacity: limit?.figure ?? null,
+          about: about || (limit?.about ?? false),
+        })
+        return
+      }
+      const { joint, contacts: count, figures } = branch
+      const { rating, weaker } = figures
+      contacts.push({
+        joint,
+        line: network.line,
+        contacts: count,
+        current_A,
+        range_A,
+        resistance_ohm,
+        limit_A: rating ? rating.value * count : null,
+        limitLow_A: rating ? rating.low * count : null,
+        weaker: joint[weaker],
+        rating: rating?.figure ?? null,
+        drop_V: current_A.map((current) => current * resistance_ohm),
+        about: about || (rating?.about ?? false),
+      })
+    })
+  }
+  return { contacts, conductors }
+}

@@ -1,0 +1,96 @@
+import type { Plan } from './plan.ts'
+import { solveCore } from './core.ts'
+
+/**
+ * Where each node's and branch's values stand. A node has one value a column (a moment, a step of a timeline);
+ * parts of the network that nothing but a held node joins may have different numbers of columns.
+ */
+export interface Columns {
+  /** Node `i` owns values `node[i]` up to `node[i + 1]`. Held nodes may own none. */
+  node: Int32Array
+  branch: Int32Array
+}
+
+export interface Solution {
+  /** Voltage of each node at each column, on the scale of the held voltages. Zero where nothing reaches. */
+  voltage_V: Float64Array
+  /** Current of each branch at each column, signed `from` to `to`. */
+  current_A: Float64Array
+  /** Loops without any resistance: their current is shared as if all branches were alike. */
+  loops: readonly (readonly number[])[]
+}
+
+/** The same number of columns for every node. */
+export function evenColumns(plan: Plan, width: number): Columns {
+  const even = (count: number) => Int32Array.from({ length: count + 1 }, (_, i) => i * width)
+  return { node: even(plan.nodes), branch: even(plan.from.length) }
+}
+
+/** Columns of branches from those of the nodes: a branch has as many as its wider end. */
+export function columnsOf({ from, to }: Plan, node: Int32Array): Columns {
+  const branch = new Int32Array(from.length + 1)
+  for (let i = 0; i < from.length; i++) {
+    const u = from[i]!
+    const v = to[i]!
+    branch[i + 1] = branch[i]! + Math.max(node[u + 1]! - node[u]!, node[v + 1]! - node[v]!)
+  }
+  return { node, branch }
+}
+
+/**
+ * Solves a direct-current network of resistances, held voltages and constant currents drawn at nodes.
+ *
+ * One sweep up the pruned trees adds the currents, the core (loops, if any) is solved as a matrix, one sweep down
+ * gives the voltages. Branches without resistance are allowed anywhere. What nothing reaches carries nothing.
+ */
+export function solveNetwork(
+  plan: Plan,
+  columns: Columns,
+  resistance_ohm: Float64Array,
+  held_V: Float64Array,
+  draw_A: Float64Array,
+): Solution {
+  const { from, to, pruned, via, reached, held } = plan
+  const { node: nodeAt, branch: branchAt } = columns
+  const drawn = Float64Array.from(draw_A)
+  const voltage_V = new Float64Array(draw_A.length)
+  const current_A = new Float64Array(branchAt[from.length]!)
+
+  for (let i = 0; i < pruned.length; i++) {
+    const node = pruned[i]!
+    if (reached[node] === 0) continue
+    const branch = via[i]!
+    const downward = to[branch] === node
+    const parent = downward ? from[branch]! : to[branch]!
+    const sign = downward ? 1 : -1
+    const width = nodeAt[node + 1]! - nodeAt[node]!
+    const own = nodeAt[node]!
+    const out = branchAt[branch]!
+    for (let k = 0; k < width; k++) current_A[out + k] = sign * drawn[own + k]!
+    if (held[parent] === 1) continue
+    const above = nodeAt[parent]!
+    for (let k = 0; k < width; k++) drawn[above + k]! += drawn[own + k]!
+  }
+
+  for (let node = 0; node < plan.nodes; node++)
+    if (held[node] === 1) voltage_V.fill(held_V[node]!, nodeAt[node]!, nodeAt[node + 1]!)
+  const loops =
+    plan.core.length > 0 ? solveCore(plan, columns, resistance_ohm, held_V, drawn, voltage_V, current_A) : []
+
+  for (let i = pruned.length - 1; i >= 0; i--) {
+    const node = pruned[i]!
+    if (reached[node] === 0) continue
+    const branch = via[i]!
+    const parent = from[branch] === node ? to[branch]! : from[branch]!
+    const drop = (to[branch] === node ? 1 : -1) * resistance_ohm[branch]!
+    const own = nodeAt[node]!
+    const width = nodeAt[node + 1]! - own
+    const out = branchAt[branch]!
+    const fixed = held[parent] === 1
+    const base = fixed ? held_V[parent]! : 0
+    const above = nodeAt[parent]!
+    for (let k = 0; k < width; k++)
+      voltage_V[own + k] = (fixed ? base : voltage_V[above + k]!) - drop * current_A[out + k]!
+  }
+  return { voltage_V, current_A, loops }
+}
