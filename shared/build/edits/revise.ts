@@ -80,13 +80,6 @@ export function moveParts(
   return outcome(label ?? `Move ${refList(moved.map((part) => part.ref))}`, changes)
 }
 
-/** Lets the layout place everything again. */
-export function tidy(document: BuildDocument): EditOutcome {
-  const placed = document.parts.filter((part) => part.position !== undefined)
-  if (placed.length === 0) return refuse('Everything already stands where the layout puts it.')
-  return moveParts(document, new Map(placed.map((part) => [part.id, null])), 'Tidy layout')
-}
-
 export function changeSettings(document: BuildDocument, settings: Settings): EditOutcome {
   if (JSON.stringify(settings) === JSON.stringify(document.settings)) return refuse('Nothing would change.')
   return outcome('Change build settings', [{ op: 'updateSettings', settings }])

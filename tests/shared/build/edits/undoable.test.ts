@@ -10,7 +10,7 @@ import { duplicateParts } from '#shared/build/edits/duplicate.ts'
 import type { EditOutcome, MakeId } from '#shared/build/edits/outcome.ts'
 import { addParts } from '#shared/build/edits/place.ts'
 import { removeChosen } from '#shared/build/edits/remove.ts'
-import { moveParts, patchPart, tidy } from '#shared/build/edits/revise.ts'
+import { moveParts, patchPart } from '#shared/build/edits/revise.ts'
 import { leaveBay, moveToBay } from '#shared/build/edits/seat.ts'
 import { countingIds, documentOf, smallCatalog } from './smallShop.ts'
 
@@ -74,7 +74,6 @@ const gesture: fc.Arbitrary<Gesture> = fc.oneof(
       (build) =>
         moveParts(build.document, new Map([[idOf(build, a), { x, y: 0 }]])),
   ),
-  fc.constant((build: ResolvedBuild) => tidy(build.document)),
 )
 
 /** Lists may end in another order: content is what counts. */
