@@ -182,13 +182,6 @@ export default defineConfig(
     rules: { 'no-restricted-syntax': ['error', ...noDefaultExport] },
   },
   {
-    // One folder is one rule: its name is the folder's, its list is shared/rules/index.ts.
-    files: ['shared/rules/*/index.ts'],
-    rules: {
-      'no-restricted-syntax': ['error', ...dynamicImportsOf(walls.shared), ...noEnvironment, ...noChance],
-    },
-  },
-  {
     // These are read by tools that want a default export.
     files: ['eslint.config.js', 'vite.config.ts'],
     rules: { 'no-restricted-syntax': ['error', ...noEnvironment] },
