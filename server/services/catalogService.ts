@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto'
 import { QueryTypes, type Sequelize } from 'sequelize'
 import { indexCatalog, type Catalog, type CatalogIndex } from '#shared/catalog/catalog.ts'
 import type { Model } from '#shared/catalog/model.ts'
+import { catalogProblems } from '#shared/catalog/problems.ts'
 import { takeLock } from '../db/lock.ts'
 import { CatalogRevision } from '../models/index.ts'
 import { Refusal } from './refusal.ts'
@@ -37,7 +38,7 @@ export function makeCatalogService(database: Sequelize, shipped: Catalog): Catal
     async putModel(model, authorId, note) {
       await database.transaction(async (transaction) => {
         await takeLock(database, 'catalog', transaction)
-        refuseUnfit(model, (await current()).index)
+        refuseUnfit(model, await current())
         await CatalogRevision.create({ modelId: model.id, model, note, authorId }, { transaction })
       })
       return model
@@ -45,29 +46,15 @@ export function makeCatalogService(database: Sequelize, shipped: Catalog): Catal
   }
 }
 
-/** A model must use connector types and sources that are there, and keep the connectors that builds may be joined to. */
-function refuseUnfit(model: Model, index: CatalogIndex): void {
-  const errors = [...missingReferences(model, index, 'model'), ...lostConnectors(model, index.models.get(model.id))]
-  if (errors.length > 0) throw new Refusal('bad-input', { errors })
-}
-
-/** References of a model that lead nowhere, by their place under `at`. */
-export function missingReferences(model: Model, index: CatalogIndex, at: string): { path: string; message: string }[] {
-  const errors: { path: string; message: string }[] = []
-  model.connectors.forEach((connector, i) => {
-    if (!index.connectorTypes.has(connector.type))
-      errors.push({
-        path: `${at}.connectors[${i}].type`,
-        message: `the catalog has no connector type "${connector.type}"`,
-      })
-  })
-  model.sources.forEach((source, i) => {
-    if (!index.sources.has(source))
-      errors.push({ path: `${at}.sources[${i}]`, message: `the catalog has no source "${source}"` })
-  })
-  if (model.class !== undefined && !index.classes.has(model.class))
-    errors.push({ path: `${at}.class`, message: `the catalog has no class "${model.class}"` })
-  return errors
+/** A model must fit the catalog that it joins, and keep the connectors that builds may be joined to. */
+function refuseUnfit(model: Model, { data, index }: CurrentCatalog): void {
+  const models = [...data.models.filter((other) => other.id !== model.id), model]
+  const own = `models.${model.id}`
+  const unfit = catalogProblems({ ...data, models })
+    .filter(({ path }) => path === own || path.startsWith(`${own}.`) || path.startsWith(`${own}[`))
+    .map(({ path, message }) => ({ path: `model${path.slice(own.length)}`, message }))
+  const errors = [...unfit, ...lostConnectors(model, index.models.get(model.id))]
+  if (errors.length > 0) throw new Refusal('bad-input', { errors: errors.slice(0, 100) })
 }
 
 function lostConnectors(model: Model, before: Model | undefined): { path: string; message: string }[] {
