@@ -4,7 +4,7 @@ import type { Drawing, DrawnNode } from './drawing.ts'
 import { facingOf, hostDistances } from './facing.ts'
 import { closeRanks, depthsOf } from './layers.ts'
 import { placeLoom, type Link } from './loom.ts'
-import { tag } from './metrics.ts'
+import { loom, tag } from './metrics.ts'
 import { applyOwnPositions } from './positions.ts'
 import { makePowerTag, makeStubs, type LoomNode } from './powerLoom.ts'
 import { makeRuns, type PlacedRun } from './runs.ts'
@@ -56,24 +56,33 @@ function placePowerLoom(members: readonly LoomNode[], runs: readonly PlacedRun[]
     steps.map((run) => ({ from: run.from.node, to: run.to.node })),
     (node) => leastPowerDepth(partOf.get(node), hasLeads),
   )
-  const deepest = Math.max(0, ...depths.values())
+  const isLow = (node: DrawnNode) => (node.kind === 'stub' ? !isTail(node) : isConsumer(partOf.get(node)))
+  const deepest = Math.max(0, ...[...depths].map(([node, depth]) => (isLow(node) || isTail(node) ? 0 : depth)))
   for (const node of depths.keys()) if (isTail(node)) depths.set(node, deepest + 1)
-  const ranks = closeRanks(depths)
-  const columns = mirrored(ranks)
-  const low = members.filter(({ node, part }) => (node.kind === 'stub' ? !isTail(node) : isConsumer(part)))
-  const homes = new Map(low.map(({ node }, i) => [node, strip.y + strip.height + 48 + i * 44]))
+  const columns = mirrored(closeRanks(depths))
+
+  const low = members.filter(({ node }) => isLow(node))
+  const below = strip.y + strip.height + 48
+  const homes = new Map(low.map(({ node }, i) => [node, below + i * 48]))
   for (const { node, part } of members) if (part.model.kind === 'supply') homes.set(node, strip.y + node.height / 2)
+  const outermost = Math.max(0, ...columns.values())
+  const hasTails = members.some(({ node }) => isTail(node))
   placeLoom({
     side: 'left',
     edge: strip.x,
     columns,
     links: linksOf(steps, columns, 'left'),
     homes,
-    floor: strip.y + strip.height + 48 + low.length * 44,
+    floor: below + low.length * 48,
+    gapOf(column) {
+      if (column === 0 && hasTails) return loom.tailGap
+      return column === outermost ? loom.supplyGap : loom.columnGap
+    },
   })
 }
 
-const isConsumer = (part: ResolvedPart): boolean => part.model.kind === 'fan' || part.model.kind === 'load'
+const isConsumer = (part: ResolvedPart | undefined): boolean =>
+  part?.model.kind === 'fan' || part?.model.kind === 'load'
 
 function leastPowerDepth(part: ResolvedPart | undefined, hasLeads: boolean): number {
   switch (part?.model.kind) {
@@ -106,6 +115,7 @@ function placeDataLoom(members: readonly LoomNode[], runs: readonly PlacedRun[],
     links: linksOf(steps, columns, 'right'),
     homes: new Map(),
     floor: strip.y + strip.height - tag.compactHeight / 2,
+    gapOf: () => loom.columnGap,
   })
 }
 
@@ -126,14 +136,18 @@ function mirrored(ranks: ReadonlyMap<DrawnNode, number>): Map<DrawnNode, number>
   return new Map([...ranks].map(([node, rank]) => [node, last - rank]))
 }
 
+/** A card stands at its slot's height, whatever else the board is joined to. */
+const slotWeight = 20
+
 /** Runs that lie within one loom and lead away from the strip, column by column. */
 function linksOf(runs: readonly PlacedRun[], columns: ReadonlyMap<DrawnNode, number>, side: 'left' | 'right'): Link[] {
-  return runs.flatMap(({ run, from, to }) => {
+  return runs.flatMap(({ run, from, to, inSlot }) => {
     const [near, far] = side === 'left' ? [to, from] : [from, to]
     const column = columns.get(far.node)
     const nearIsFrame = near.node.kind !== 'part' && near.node.kind !== 'stub'
     if (column === undefined || !(nearIsFrame || columns.has(near.node))) return []
-    return (columns.get(near.node) ?? -1) < column ? [{ run, near, far }] : []
+    if ((columns.get(near.node) ?? -1) >= column) return []
+    return [{ run, near, far, weight: inSlot ? slotWeight : 1 }]
   })
 }
 

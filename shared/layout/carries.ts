@@ -3,7 +3,7 @@ import type { ResolvedConnector, ResolvedJoint, ResolvedPart } from '../build/re
 export type Carries = 'power' | 'data' | 'both'
 
 /** Slots and card edges bring power to a card too, but a builder reads them as the way to the processor: data. */
-const isSlot = (connector: ResolvedConnector): boolean =>
+export const isSlot = (connector: ResolvedConnector): boolean =>
   connector.type.side === 'slot' || connector.type.side === 'edge'
 
 /** What a connector of this very part carries, as the drawing tells it. */

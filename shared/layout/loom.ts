@@ -8,6 +8,8 @@ export interface Link {
   run: DrawnRun
   near: Place
   far: Place
+  /** How much it insists on running level; 1 where not said. */
+  weight?: number
 }
 
 export interface LoomPlan {
@@ -21,6 +23,8 @@ export interface LoomPlan {
   homes: ReadonlyMap<DrawnNode, number>
   /** Height for what leads nowhere and hangs on nothing, as a part just taken from the shelf. */
   floor: number
+  /** Room between a column and what lies before it, seen from the strip. */
+  gapOf(column: number): number
 }
 
 /** Most places kept free for passing runs; beyond that a diagram is no longer read by eye and runs go straight. */
@@ -77,12 +81,11 @@ export function placeLoom(plan: LoomPlan): void {
 }
 
 /** The edge of each column that faces the strip. */
-function columnEdges({ side, edge, columns }: LoomPlan, widths: readonly number[]): number[] {
+function columnEdges({ side, edge, gapOf }: LoomPlan, widths: readonly number[]): number[] {
   const sign = side === 'left' ? -1 : 1
-  const tailsOnly = [...columns].every(([node, column]) => column > 0 || node.kind === 'stub')
   let x = edge
   return widths.map((width, column) => {
-    const own = x + sign * (column === 0 && tailsOnly ? loom.tailGap : loom.columnGap)
+    const own = x + sign * gapOf(column)
     x = own + sign * width
     return own
   })
@@ -122,10 +125,15 @@ function nodeEntry(
     const home = pulls.heights.get(node) ?? 0
     return { node, key: home, order, stacked: { wish: home - node.height / 2, height: node.height, weight: 0.1 } }
   }
-  const heights = used.map((link) => nearHeight(link, laneOf))
-  const key = mean(heights)
-  const wish = mean(used.map((link, i) => (heights[i] ?? 0) - link.far.port.y))
-  return { node, key, order, stacked: { wish, height: node.height, weight: used.length } }
+  let [weights, keys, wishes] = [0, 0, 0]
+  for (const link of used) {
+    const weight = link.weight ?? 1
+    const height = nearHeight(link, laneOf)
+    weights += weight
+    keys += weight * height
+    wishes += weight * (height - link.far.port.y)
+  }
+  return { node, key: keys / weights, order, stacked: { wish: wishes / weights, height: node.height, weight: weights } }
 }
 
 function laneEntry(lane: Lane, order: number): Entry {

@@ -5,9 +5,10 @@ export const grid = 4
 export const tag = {
   width: 164,
   supplyWidth: 204,
-  header: 28,
+  /** Designation, and the name in up to two lines. */
+  header: 36,
   portPitch: 20,
-  footer: 8,
+  footer: 4,
   /** Lines of rail figures that stand beside a supply's sockets. */
   supplyLines: 5,
   /** A part with one connector on either side is one line high, so that a column of them keeps step with the rows. */
@@ -31,7 +32,7 @@ export const strip = {
   /** Room between a backplane's edge and its rows, where the seats are drawn. */
   gutter: 28,
   /** Inset of a seat's contact from the backplane's edge. */
-  seatInset: 8,
+  seatInset: 12,
   stackGap: 48,
 } as const
 
@@ -39,10 +40,12 @@ export const strip = {
 export const loom = {
   /** Between two columns, and between the last column and the strip: room for a curve and its amperes. */
   columnGap: 92,
+  /** Between supplies and what they feed: many thick runs part here. */
+  supplyGap: 128,
   /** Between the tails of cables and their drives: nothing is written there. */
   tailGap: 40,
   /** Between two tags of one column. */
-  nodeGap: 20,
+  nodeGap: 16,
   /** Where at least one of the two is one line high. */
   compactGap: 12,
   /** Between a passing run and a tag. */

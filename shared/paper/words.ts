@@ -54,3 +54,13 @@ export const serialTail = (serial: string): string => (serial.length > 4 ? `…$
 
 /** "1 outlet left", "3 outlets left" */
 export const counted = (count: number, one: string, many = `${one}s`): string => `${count} ${count === 1 ? one : many}`
+
+/** Kind words that a tag need not repeat: its place and its connectors say them. */
+const kindWords = /^(breakout|cable|splitter|adapter|backplane|controller|expander|fan), /i
+
+/** Name of a part for its tag: its own, else the model's without the kind. */
+export function tagWords(name: string | undefined, model: Model): string {
+  if (name) return name
+  const short = model.name.replace(kindWords, '')
+  return short.charAt(0).toUpperCase() + short.slice(1)
+}

@@ -3,7 +3,7 @@ import type { DrawnNode } from '../../layout/drawing.ts'
 import { strip } from '../../layout/metrics.ts'
 import { box, element, group, line, text } from '../svg.ts'
 import { textWidth } from '../text/textWidth.ts'
-import { driveWords, serialTail } from '../words.ts'
+import { driveWords, serialTail, tagWords } from '../words.ts'
 import { connectorMark, openEnd, severityTag, severityTagWidth } from './marks.ts'
 import { palette, severityColour } from './palette.ts'
 import type { Reading } from './reading.ts'
@@ -24,17 +24,23 @@ export function drawCase(node: DrawnNode, build: ResolvedBuild): string {
       anchor: 'middle',
       width: width - 24,
     }),
-    ...(node.headings ?? []).flatMap((heading) => [
+    ...node.ports.map((port) => connectorMark(x + port.x, y + port.y, port.gender, palette.ink)),
+  ])
+}
+
+/** Names of cages, above their rows. */
+export const drawCages = ({ x, y, width, headings = [] }: DrawnNode): string =>
+  group(
+    {},
+    headings.map((heading) =>
       text(x + heading.x, y + heading.y, heading.text, {
         size: 11,
         weight: 600,
         fill: palette.soft,
         width: width - 48,
       }),
-    ]),
-    ...node.ports.map((port) => connectorMark(x + port.x, y + port.y, port.gender, palette.ink)),
-  ])
-}
+    ),
+  )
 
 /** A backplane as the frame of the rows that it serves. */
 export function drawBackplane(node: DrawnNode, build: ResolvedBuild, reading: Reading): string {
@@ -52,7 +58,7 @@ export function drawBackplane(node: DrawnNode, build: ResolvedBuild, reading: Re
       radius: 3,
     }),
     text(x + strip.gutter, y + 16, part.part.ref, { size: 11.5, weight: 700, fill: palette.ink }),
-    text(x + strip.gutter + refWidth + 8, y + 16, part.part.name ?? part.model.name, {
+    text(x + strip.gutter + refWidth + 8, y + 16, tagWords(part.part.name, part.model), {
       size: 11,
       fill: palette.soft,
       width: width - 2 * strip.gutter - refWidth - 8 - (severity ? 70 : 0),

@@ -4,7 +4,7 @@ import type { CheckResult, MomentId } from '../../check/result.ts'
 import type { Drawing, DrawnNode } from '../../layout/drawing.ts'
 import { box, element, escapeXml, group, line, text } from '../svg.ts'
 import { wrapText } from '../text/textWidth.ts'
-import { drawBackplane, drawCase, drawEmptyBay, drawRow } from './bays.ts'
+import { drawBackplane, drawCages, drawCase, drawEmptyBay, drawRow } from './bays.ts'
 import type { Block } from './block.ts'
 import { findingsBlock } from './findingsBlock.ts'
 import { flow } from './flow.ts'
@@ -51,7 +51,7 @@ export function flatDiagram(input: FlatInput): string {
   const inner = Math.max(bounds.width + 2 * sideRoom(build, drawing), leastWidth - 2 * margin)
   const momentLabel = result.moments.find((one) => one.moment === moment)?.label ?? moment
   const title = header(input, momentLabel, inner)
-  const band = flow(lowerBand(input, reading, momentLabel, inner), inner, 40)
+  const band = flow(lowerBand(input, reading, momentLabel, inner), inner, bandGap)
 
   const diagramTop = margin + title.height + 32
   const bandTop = diagramTop + bounds.height + 56
@@ -117,6 +117,7 @@ function drawDiagram(build: ResolvedBuild, drawing: Drawing, reading: Reading): 
   return [
     ...cases.map((node) => drawCase(node, build)),
     ...of('backplane').map((node) => drawBackplane(node, build, reading)),
+    ...cases.map(drawCages),
     drawRuns(seats, reading),
     drawRuns(looms, reading),
     ...of('empty-bay').map(drawEmptyBay),
@@ -140,7 +141,7 @@ function header({ document, result, revision, date }: FlatInput, moment: string,
     `amperes at: ${moment.toLowerCase()}`,
   ]
     .filter(Boolean)
-    .join('   ')
+    .join(' · ')
   const boxHeight = lines.length === 0 ? 0 : 20 + lines.length * 20
   return {
     width,
@@ -169,18 +170,25 @@ function header({ document, result, revision, date }: FlatInput, moment: string,
 
 function lowerBand(input: FlatInput, reading: Reading, moment: string, width: number): Block[] {
   const { document, build, result, revision, date, checked = 'not reviewed' } = input
-  const cases = build.parts.filter((part) => part.model.bays.length > 0 && part.model.kind === 'case')
-  return [
+  const cases = build.parts.filter((part) => part.model.kind === 'case')
+  const blocksWith = (parts: Block) => [
     findingsBlock(result),
     ...cases.map((holder) => frontBlock(build, holder, reading)),
-    partsBlock(build, Math.max(1, Math.floor((width - 1500) / 360))),
+    parts,
     legend(),
     titleBlock(
       { name: document.name, machine: document.machine, revision: String(revision), date, moment, checked },
       result,
     ),
   ]
+  const choices = [3, 2, 1].map((columns) => blocksWith(partsBlock(build, columns)))
+  return choices.find((blocks) => widthOf(blocks) <= width) ?? choices.at(-1) ?? []
 }
+
+const bandGap = 40
+
+const widthOf = (blocks: readonly Block[]): number =>
+  blocks.reduce((sum, block) => sum + block.width, 0) + (blocks.length - 1) * bandGap
 
 const cautionHeight = 32
 

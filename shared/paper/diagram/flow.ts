@@ -6,7 +6,7 @@ interface PlacedBlock {
   y: number
 }
 
-/** Sets blocks side by side, in as many lines as the width asks for; the last block stands at the lower right. */
+/** Sets blocks side by side, in as many lines as the width asks for; the last stands at the lower right, under what is there. */
 export function flow(blocks: readonly Block[], width: number, gap: number): Block {
   const placed: PlacedBlock[] = []
   let [x, y, lineHeight] = [0, 0, 0]
@@ -20,11 +20,15 @@ export function flow(blocks: readonly Block[], width: number, gap: number): Bloc
     x += block.width + gap
     lineHeight = Math.max(lineHeight, block.height)
   }
-  const height = y + lineHeight
-  const last = placed.at(-1)
+  let height = y + lineHeight
+  const last = placed.pop()
   if (last) {
-    last.x = Math.max(last.x, width - last.block.width)
+    last.x = Math.max(0, width - last.block.width)
+    const above = placed.filter((one) => one.x + one.block.width > last.x).map((one) => one.y + one.block.height)
+    const top = Math.max(0, ...above.map((bottom) => bottom + gap))
+    height = Math.max(top + last.block.height, ...placed.map((one) => one.y + one.block.height))
     last.y = height - last.block.height
+    placed.push(last)
   }
   return {
     width,

@@ -2,8 +2,8 @@ import type { ResolvedBuild, ResolvedPart } from '../../build/resolve.ts'
 import type { DrawnNode, DrawnPort } from '../../layout/drawing.ts'
 import { tag as size } from '../../layout/metrics.ts'
 import { box, group, line, text } from '../svg.ts'
-import { textWidth } from '../text/textWidth.ts'
-import { counted, supplyLines } from '../words.ts'
+import { textWidth, wrapText } from '../text/textWidth.ts'
+import { counted, supplyLines, tagWords } from '../words.ts'
 import { connectorMark, openEnd, severityTag } from './marks.ts'
 import { palette, severityColour } from './palette.ts'
 import type { Reading } from './reading.ts'
@@ -40,17 +40,16 @@ export function drawTag(node: DrawnNode, build: ResolvedBuild, reading: Reading)
 
 function drawHeader(node: DrawnNode, part: ResolvedPart): string[] {
   const { x, y, width } = node
-  const baseline = y + (node.compact ? node.height / 2 + 4.5 : 19)
   const { ref } = part.part
-  const room = width - 2 * pad - textWidth(ref, 13, 700) - 10
+  const refWidth = textWidth(ref, 13, 700)
+  const name = tagWords(part.part.name, part.model)
+  const lines = wrapText(name, width - 2 * pad - refWidth - 10, 10.5, 400, 2)
+  const first = y + (lines.length > 1 ? 15.5 : 22)
   const marks = [
-    text(x + pad, baseline, ref, { size: 13, weight: 700, fill: palette.ink }),
-    text(x + width - pad, baseline, part.part.name ?? part.model.name, {
-      size: 11.5,
-      fill: palette.soft,
-      anchor: 'end',
-      width: room,
-    }),
+    text(x + pad, y + 22.5, ref, { size: 13, weight: 700, fill: palette.ink }),
+    ...lines.map((words, i) =>
+      text(x + pad + refWidth + 10, first + i * 13, words, { size: 10.5, fill: palette.soft }),
+    ),
   ]
   if (!node.compact) marks.push(line(x, y + size.header, x + width, y + size.header, palette.hairline))
   return marks
@@ -61,7 +60,7 @@ function drawSpare(node: DrawnNode, part: ResolvedPart): string {
   if (part.model.kind === 'supply' || part.model.kind === 'board') return ''
   const spare = node.ports.filter((port) => port.side === 'right' && port.carries === 'power' && !port.joined).length
   if (spare === 0) return ''
-  return text(node.x + pad, node.y + node.height - 9, `${counted(spare, 'outlet')} left`, {
+  return text(node.x + pad, node.y + node.height - 8, `${counted(spare, 'outlet')} left`, {
     size: 10.5,
     fill: palette.soft,
     width: node.width - 60,
