@@ -84,7 +84,7 @@ describe('drives in step', () => {
         let sum = 0
         for (let i = 0; i < steps; i++) {
           const position = ((i + 0.5) / steps) * 4
-          sum += (4e6 / steps / Math.sqrt(Math.min(...lines.map((one) => squareAt(one, position))))) / 3600
+          sum += 4e6 / steps / Math.sqrt(Math.min(...lines.map((one) => squareAt(one, position)))) / 3600
         }
         expect(hours(...lines)!).toBeCloseTo(sum, 3)
       }),
