@@ -1,16 +1,18 @@
 import { branchCurrents, branchRange, islandOf, type SolvedLine } from './branchValues.ts'
 import type { Islands } from './islands.ts'
-import type { ConductorLoad, ContactLoad } from './result.ts'
+import type { ConductorLoad, ContactLoad, PowerResult } from './result.ts'
 
 /** What every contact and conductor carries. */
 export function branchLoads(
   solved: readonly SolvedLine[],
   islands: Islands,
-): { contacts: ContactLoad[]; conductors: ConductorLoad[] } {
+): Pick<PowerResult, 'contacts' | 'conductors' | 'byBranch'> {
   const contacts: ContactLoad[] = []
   const conductors: ConductorLoad[] = []
-  for (const line of solved) {
+  const byBranch = solved.map(({ network }) => new Array<ContactLoad | ConductorLoad | null>(network.branches.length))
+  solved.forEach((line, l) => {
     const { network } = line
+    const own = byBranch[l]!.fill(null)
     network.branches.forEach((branch, i) => {
       if (branch.kind === 'feed') return
       const island = islandOf(line, i, islands)
@@ -22,7 +24,7 @@ export function branchLoads(
       if (branch.kind === 'wire') {
         const { part, conductor, index, figures } = branch
         const { limit } = figures
-        conductors.push({
+        const load: ConductorLoad = {
           part,
           conductor,
           index,
@@ -33,12 +35,14 @@ export function branchLoads(
           limitLow_A: limit?.low ?? null,
           ampacity: limit?.figure ?? null,
           about: about || (limit?.about ?? false),
-        })
+        }
+        own[i] = load
+        conductors.push(load)
         return
       }
       const { joint, contacts: count, figures } = branch
       const { rating, weaker } = figures
-      contacts.push({
+      const load: ContactLoad = {
         joint,
         line: network.line,
         contacts: count,
@@ -51,8 +55,10 @@ export function branchLoads(
         rating: rating?.figure ?? null,
         drop_V: current_A.map((current) => current * resistance_ohm),
         about: about || (rating?.about ?? false),
-      })
+      }
+      own[i] = load
+      contacts.push(load)
     })
-  }
-  return { contacts, conductors }
+  })
+  return { contacts, conductors, byBranch }
 }

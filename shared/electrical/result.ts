@@ -129,9 +129,11 @@ export interface PowerResult {
   devices: readonly DeviceLoad[]
   problems: readonly NetworkProblem[]
   timeline: readonly StageStep[]
+  /** For each line, in the order of `lines`, the load of each branch of its network; null for feeds. */
+  byBranch: readonly (readonly (ContactLoad | ConductorLoad | null)[])[]
   startPlan: StartPlan
   network: PowerNetwork
-  /** Every place where a device takes current, whether or not it flows. */
+  /** Every place where a device takes current, whether or not it flows. In the order of `devices`. */
   draws: readonly Draw[]
   /** A supply rail reaches this connector. */
   reaches(connector: ResolvedConnector, rail: Rail): boolean

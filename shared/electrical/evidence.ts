@@ -1,0 +1,37 @@
+import type { ResolvedPart } from '../build/resolve.ts'
+import { momentIds, type Figure, type MomentId } from '../check/result.ts'
+import { refsOf } from '../check/words.ts'
+import type { Draw } from './attach.ts'
+import { courseOf } from './courses.ts'
+import type { PowerResult } from './result.ts'
+
+/** Figures of loads, the heaviest together first: "start current on 12 V of C1 to C4". At most `most`. */
+export function loadFigures(power: PowerResult, draws: readonly Draw[], moment: MomentId, most = 4): Figure[] {
+  const byFigure = new Map<Figure, { parts: ResolvedPart[]; sum_A: number }>()
+  for (const draw of draws) {
+    const { figure, value } = busiest(power, draw, moment)
+    const known = byFigure.get(figure)
+    if (known) {
+      known.parts.push(draw.part)
+      known.sum_A += value * draw.share
+    } else byFigure.set(figure, { parts: [draw.part], sum_A: value * draw.share })
+  }
+  return [...byFigure]
+    .filter(([, { sum_A }]) => sum_A > 0)
+    .sort(([, a], [, b]) => b.sum_A - a.sum_A)
+    .slice(0, most)
+    .map(([figure, { parts }]) => ({ ...figure, what: `${figure.what} of ${refsOf(parts)}` }))
+}
+
+/** The figure by which a device draws most at a moment. */
+export function busiest({ startPlan }: PowerResult, { part, currents }: Draw, moment: MomentId) {
+  return courseOf(moment, part, currents, startPlan)
+    .map(({ state }) => currents.inState[state])
+    .reduce((most, taken) => (taken.value > most.value ? taken : most))
+}
+
+/** Seconds for which motors fed by these draws start. */
+export const longestStart_s = (draws: readonly Draw[]): number =>
+  draws.reduce((most, { currents }) => Math.max(most, currents.start_s), 0)
+
+export const momentIndex = (moment: MomentId): number => momentIds.indexOf(moment)
