@@ -43,6 +43,8 @@ export interface Saver {
   discard(): Promise<void>
   state(): SaveState
   unsaved(): number
+  /** Everything that is not acknowledged yet, oldest first. */
+  pending(): readonly Edit[]
   close(): void
 }
 
@@ -222,6 +224,7 @@ export function createSaver(options: SaverOptions): Saver {
     discard,
     state,
     unsaved,
+    pending: () => [...(sending?.edits ?? []), ...waiting],
     close() {
       closed = true
       cancelTimer()
