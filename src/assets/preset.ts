@@ -179,7 +179,6 @@ export const preset = definePreset(
           },
         },
       },
-      checkbox: { focusRing: { offset: '2px' } },
       dialog: { title: { fontSize: '1.286rem' } },
       drawer: { title: { fontSize: '1.286rem' } },
       message: { text: { fontWeight: '400' } },

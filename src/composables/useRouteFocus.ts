@@ -2,8 +2,8 @@ import { nextTick } from 'vue'
 import { useRouter } from 'vue-router'
 
 /**
- * Moves the focus to the new page's heading, so that keyboard and screen reader start at its top. Waits for pages whose
- * heading comes with their data. Changes of query or hash within one page keep the focus.
+ * Moves the focus to the new page's heading (to the page itself where it has none), so that keyboard and screen reader
+ * start at its top. Changes of query or hash within one page keep the focus.
  */
 export function useRouteFocus(main: () => HTMLElement | null): void {
   let isFirst = true
