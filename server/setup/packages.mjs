@@ -12,6 +12,15 @@ const stamp = join(root, 'node_modules', '.bayloom-installed')
 const wanted = () =>
   `${hashOf(root, ['package-lock.json'])} ${process.versions.modules} ${process.platform}-${process.arch}\n`
 
+/** Spares the comparison next time. Packages that somebody else installed for us may be read-only; then it is made again. */
+const remember = () => {
+  try {
+    if (!existsSync(stamp) || readFileSync(stamp, 'utf8') !== wanted()) writeFileSync(stamp, wanted())
+  } catch (error) {
+    if (!(error instanceof Error && 'code' in error && (error.code === 'EACCES' || error.code === 'EROFS'))) throw error
+  }
+}
+
 /** @typedef {Record<string, { version?: string, integrity?: string, optional?: boolean, peer?: boolean }>} Locked */
 
 /** Whether npm's own record of what it installed says the same as the lock file. @param {Locked} locked @param {Locked} installed */
@@ -41,7 +50,7 @@ export const installPackages = (say) =>
     'packages',
     async () => {
       if (isInstalled()) {
-        writeFileSync(stamp, wanted())
+        remember()
         return { outcome: 'as locked' }
       }
       say('installing the locked packages, which takes a minute or so')
@@ -52,7 +61,7 @@ export const installPackages = (say) =>
         throw new Refusal(
           `The packages could not be installed: npm ci ended with ${code}. Is the network reachable?\n${tail(output)}`,
         )
-      writeFileSync(stamp, wanted())
+      remember()
       return { outcome: 'installed' }
     },
     () => say('another start installs the packages; waiting for it'),

@@ -31,10 +31,11 @@ export const countTests = (report, code) => {
 export const runVitest = async (args, databaseUrl) => {
   const folder = mkdtempSync(join(tmpdir(), 'bayloom-test-'))
   const file = join(folder, 'report.json')
+  const colour = process.stdout.isTTY ? {} : { NO_COLOR: '1' }
   const { code } = await run(
     join(root, 'node_modules', '.bin', 'vitest'),
-    ['run', '--reporter=dot', '--reporter=json', `--outputFile.json=${file}`, ...args],
-    { show: true, env: { ...process.env, TEST_DATABASE_URL: databaseUrl } },
+    ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${file}`, ...args],
+    { show: true, env: { ...process.env, ...colour, TEST_DATABASE_URL: databaseUrl } },
   )
   const report = existsSync(file) ? JSON.parse(readFileSync(file, 'utf8')) : null
   rmSync(folder, { recursive: true })
