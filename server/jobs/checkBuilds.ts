@@ -1,5 +1,6 @@
 import { Op, QueryTypes } from 'sequelize'
-import { Build, BuildRevision } from '../models/index.ts'
+import type { BuildDocument } from '#shared/build/document.ts'
+import { Build } from '../models/index.ts'
 import { verdictColumns } from '../services/buildSummary.ts'
 import type { Context } from '../services/context.ts'
 import type { Job } from './jobLoop.ts'
@@ -7,18 +8,18 @@ import type { Job } from './jobLoop.ts'
 /** Checks the newest revision of a build that was too large to be checked while it was saved. */
 export function checkBuilds(context: Pick<Context, 'database' | 'catalog' | 'checks' | 'log'>): Job {
   return async () => {
-    const rows = await context.database.query<{ id: string; revision: number }>(
-      `SELECT id, revision FROM builds
-       WHERE checked_revision < revision AND check_failed_revision < revision ORDER BY changed_at LIMIT 1`,
+    const rows = await context.database.query<{ id: string; revision: number; document: BuildDocument }>(
+      `SELECT b.id, b.revision, r.document FROM builds b
+       JOIN build_revisions r ON r.build_id = b.id AND r.revision = b.revision
+       WHERE b.checked_revision < b.revision AND b.check_failed_revision < b.revision
+       ORDER BY b.changed_at LIMIT 1`,
       { type: QueryTypes.SELECT },
     )
     const waiting = rows[0]
     if (!waiting) return false
-    const { id, revision } = waiting
-    const saved = await BuildRevision.findOne({ where: { buildId: id, revision }, attributes: ['document'] })
-    if (!saved) return false
+    const { id, revision, document } = waiting
     try {
-      const result = await context.checks.check(saved.document, await context.catalog.current())
+      const result = await context.checks.check(document, await context.catalog.current())
       await Build.update(verdictColumns(result, revision), { where: { id, checkedRevision: { [Op.lt]: revision } } })
     } catch (error) {
       context.log.error({ err: error, build: id, revision }, 'check broke off')

@@ -61,7 +61,7 @@ export function passwordWeakness(password: string, email: string, name = ''): st
   const [local = '', domain = ''] = email.toLowerCase().split('@')
   const own = [email.toLowerCase(), local, domain.split('.')[0] ?? '', name.toLowerCase()].filter((w) => w.length > 2)
   if (own.some((word) => remainder(plain, word) < 6)) return 'this is little more than your own e-mail address or name'
-  if (commonStems.some((stem) => remainder(plain, stem) < 5)) return 'this is among the passwords that are tried first'
+  if (commonStems.some((stem) => remainder(plain, stem) < 7)) return 'this is among the passwords that are tried first'
   if (new Set(plain).size < 5) return 'this repeats a few characters'
   if (keyboardRuns.some((run) => longestShared(plain, run) >= plain.length - 4))
     return 'this is a run along the keyboard'
