@@ -1,4 +1,5 @@
 import type { ResolvedBuild, ResolvedPart } from '../build/resolve.ts'
+import { spreadBends } from './bends.ts'
 import { regionOf } from './carries.ts'
 import type { Drawing, DrawnNode } from './drawing.ts'
 import { facingOf, hostDistances } from './facing.ts'
@@ -33,6 +34,7 @@ export function arrange(build: ResolvedBuild): Drawing {
   const bounds = boundsOf(strips)
   placePowerLoom(power, runs, bounds)
   placeDataLoom(data, runs, bounds)
+  spreadBends(runs)
 
   const nodes = [...strips, ...power.map(({ node }) => node), ...data.map(({ node }) => node)]
   const drawing: Drawing = { nodes, runs: runs.map(({ run }) => run), bounds }
@@ -63,7 +65,12 @@ function placePowerLoom(members: readonly LoomNode[], runs: readonly PlacedRun[]
 
   const low = members.filter(({ node }) => isLow(node))
   const below = strip.y + strip.height + 48
-  const homes = new Map(low.map(({ node }, i) => [node, below + i * 48]))
+  const homes = lowHomes(
+    low.map(({ node }) => node),
+    steps,
+    below,
+  )
+  const floor = Math.max(below, ...homes.values()) + 48
   for (const { node, part } of members) if (part.model.kind === 'supply') homes.set(node, strip.y + node.height / 2)
   const outermost = Math.max(0, ...columns.values())
   const hasTails = members.some(({ node }) => isTail(node))
@@ -73,12 +80,34 @@ function placePowerLoom(members: readonly LoomNode[], runs: readonly PlacedRun[]
     columns,
     links: linksOf(steps, columns, 'left'),
     homes,
-    floor: below + low.length * 48,
+    floor,
     gapOf(column) {
       if (column === 0 && hasTails) return loom.tailGap
       return column === outermost ? loom.supplyGap : loom.columnGap
     },
   })
+}
+
+/** Heights below the strip, one after the other; what hangs on one of them stands level with it. */
+function lowHomes(low: readonly DrawnNode[], steps: readonly PlacedRun[], top: number): Map<DrawnNode, number> {
+  const members = new Set(low)
+  const hanging = new Map<DrawnNode, DrawnNode[]>()
+  const hung = new Set<DrawnNode>()
+  for (const { from, to } of steps) {
+    if (!members.has(from.node) || !members.has(to.node) || hung.has(to.node) || hanging.has(to.node)) continue
+    hung.add(to.node)
+    hanging.set(from.node, [...(hanging.get(from.node) ?? []), to.node])
+  }
+  const homes = new Map<DrawnNode, number>()
+  let cursor = top
+  for (const node of low) {
+    if (hung.has(node)) continue
+    const group = hanging.get(node) ?? []
+    const room = Math.max(node.height, group.length * tag.compactHeight) + loom.compactGap
+    for (const member of [node, ...group]) homes.set(member, cursor + room / 2)
+    cursor += room
+  }
+  return homes
 }
 
 const isConsumer = (part: ResolvedPart | undefined): boolean =>

@@ -8,7 +8,7 @@ export function courseFinder(drawing: Drawing): (run: DrawnRun) => RunCourse | u
     const from = endOf(nodes.get(run.from.node), run.from.port)
     const to = endOf(nodes.get(run.to.node), run.to.port)
     if (!from || !to) return undefined
-    return run.via ? { from, to, via: run.via } : { from, to }
+    return { from, to, ...(run.via && { via: run.via }), ...(run.bends && { bends: run.bends }) }
   }
 }
 

@@ -69,6 +69,8 @@ export interface DrawnRun {
   to: { node: string; port: string }
   /** Points that lead the run clear of the tags of columns that it passes, in order from `from`. */
   via?: { x: number; y: number }[]
+  /** Where the run turns in each gap between columns that it crosses, counted from `from`. Absent: in the middle. */
+  bends?: number[]
 }
 
 export interface Drawing {

@@ -19,7 +19,11 @@ export function applyOwnPositions(build: ResolvedBuild, drawing: Drawing): void 
     movedNodes.push(node)
   }
   if (movedNodes.length === 0) return
-  for (const run of drawing.runs) if (moved.has(run.from.node) || moved.has(run.to.node)) delete run.via
+  for (const run of drawing.runs)
+    if (moved.has(run.from.node) || moved.has(run.to.node)) {
+      delete run.via
+      delete run.bends
+    }
   const free = drawing.nodes.filter((node) => (node.kind === 'part' || node.kind === 'stub') && !moved.has(node.id))
   giveWay(free, movedNodes)
 }

@@ -11,6 +11,8 @@ export interface RunCourse {
   from: RunEnd
   to: RunEnd
   via?: readonly { x: number; y: number }[]
+  /** Where it turns in each gap. */
+  bends?: readonly (number | undefined)[]
 }
 
 interface Cubic {
@@ -28,7 +30,7 @@ interface Cubic {
 const labelRoom = 72
 
 /** The stretches of a run: curves in the gaps between columns (even places), lanes past columns (odd places). */
-function stretches({ from, to, via = [] }: RunCourse): Cubic[] {
+function stretches({ from, to, via = [], bends = [] }: RunCourse): Cubic[] {
   const heading = from.side === 'right' ? 1 : -1
   const points = [from, ...via, to]
   return points.slice(1).map((point, i) => {
@@ -38,12 +40,13 @@ function stretches({ from, to, via = [] }: RunCourse): Cubic[] {
     const distance = Math.abs(point.x - start.x)
     const forward = (point.x - start.x) * heading > 0
     const pull = forward ? distance / 2 : Math.max(48, Math.min(160, distance / 2 + Math.abs(point.y - start.y) / 4))
+    const bend = i % 2 === 0 ? bends[i / 2] : undefined
     return {
       x0: start.x,
       y0: start.y,
-      x1: start.x + starts * pull,
+      x1: bend ?? start.x + starts * pull,
       y1: start.y,
-      x2: point.x - ends * pull,
+      x2: bend ?? point.x - ends * pull,
       y2: point.y,
       x3: point.x,
       y3: point.y,

@@ -39,7 +39,10 @@ export function supplyLines(model: Model, most: number): string[] {
     const limit = known(limit_A)
     return `${name}: ${limit === undefined ? 'unknown' : `${shortNumber(limit)} A`}`
   })
-  const groups = supply.groups.flatMap(({ name, limit_W, limit_A }) => {
+  const railOf = new Map(supply.rails.map(({ id, rail }) => [id, rail]))
+  const groups = supply.groups.flatMap(({ rails: ids, limit_W, limit_A }) => {
+    const names = [...new Set(ids.flatMap((id) => railOf.get(id) ?? []))].map((rail) => railWords[rail])
+    const name = names.length === 1 ? `${names[0]} in all` : names.join(' + ')
     const watts = known(limit_W)
     const amperes = known(limit_A)
     if (watts !== undefined) return [`${name}: ${shortNumber(watts)} W`]

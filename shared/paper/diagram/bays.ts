@@ -15,10 +15,9 @@ export function drawCase(node: DrawnNode, build: ResolvedBuild): string {
   const part = build.partById.get(node.part)
   if (!part) return ''
   const { x, y, width, height } = node
-  const view = part.model.bayView ? `, seen from the ${part.model.bayView}` : ''
   return group({}, [
     box(x, y, width, height, { fill: palette.frame, stroke: palette.ink, strokeWidth: 1.25, radius: 3 }),
-    text(x + width / 2, y + 21, `${part.part.ref}  ${part.part.name ?? part.model.name}${view}`, {
+    text(x + width / 2, y + 21, `${part.part.ref}  ${part.part.name ?? part.model.name}`, {
       size: 12,
       fill: palette.soft,
       anchor: 'middle',
@@ -61,7 +60,7 @@ export function drawBackplane(node: DrawnNode, build: ResolvedBuild, reading: Re
     text(x + strip.gutter + refWidth + 8, y + 16, tagWords(part.part.name, part.model), {
       size: 11,
       fill: palette.soft,
-      width: width - 2 * strip.gutter - refWidth - 8 - (severity ? 70 : 0),
+      width: width - 2 * strip.gutter - refWidth - 8 - (severity && severity !== 'note' ? 70 : 0),
     }),
     severity && severity !== 'note'
       ? severityTag(x + width - strip.gutter - severityTagWidth(severity), y + 16, severity)

@@ -40,9 +40,13 @@ function drawRun(run: DrawnRun, course: RunCourse, severity: Severity | null, re
     'stroke-width': stroke.width,
     'stroke-dasharray': stroke.dash,
   })
-  if (severity === null || severity === 'caution') return line
+  if (run.carries === 'data') return line
+  // A casing in the colour of the paper lets the eye follow a run through a crossing.
+  const casing =
+    run.kind === 'seat' ? '' : element('path', { d, stroke: palette.paper, 'stroke-width': stroke.width + 4 })
+  if (severity === null || severity === 'caution') return casing + line
   const glow = element('path', { d, stroke: colour, 'stroke-width': stroke.width + 8, 'stroke-opacity': 0.14 })
-  return glow + line
+  return casing + glow + line
 }
 
 /** Places along the gap that a number is tried at, nearest the middle first. */

@@ -33,7 +33,11 @@ export function drawTag(node: DrawnNode, build: ResolvedBuild, reading: Reading)
       ),
     )
   if (!node.compact) inside.push(drawSpare(node, part))
-  for (const port of node.ports) inside.push(drawPort(node, port))
+  for (const port of node.ports) {
+    inside.push(drawPort(node, port))
+    if (port.side === 'left' && port.carries === 'power' && !port.joined)
+      inside.push(openEnd(x + port.x - 4, y + port.y, 'not fed', 'left'))
+  }
   if (severity && severity !== 'note') inside.push(severityTag(x, y - 4, severity))
   return group({}, inside)
 }
@@ -95,7 +99,7 @@ export function drawStub(node: DrawnNode, build: ResolvedBuild, reading: Reading
   const refWidth = textWidth(ref, 11.5, 700)
   const severity = reading.partSeverity(node.part)
   const inside = [
-    box(x, y, width, height, { fill: palette.card, stroke: palette.soft, strokeWidth: 1, radius: height / 2 }),
+    box(x, y, width, height, { fill: palette.card, stroke: palette.soft, strokeWidth: 1, radius: 14 }),
     text(x + 12, y + height / 2 + 4, ref, { size: 11.5, weight: 700, fill: palette.ink }),
     text(x + 16 + refWidth, y + height / 2 + 4, inlet?.label ?? node.ports[0]?.label ?? '', {
       size: 11,
