@@ -50,7 +50,7 @@ export function makeContext(
     },
     async close() {
       await context.jobs.stop()
-      await checks.close()
+      checks.close()
       await database.close()
     },
   }

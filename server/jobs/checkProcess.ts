@@ -1,11 +1,11 @@
-import { parentPort } from 'node:worker_threads'
 import { indexCatalog, type CatalogIndex } from '#shared/catalog/catalog.ts'
 import { check } from '#shared/check/check.ts'
 import type { CheckAnswer, CheckTask } from '../services/checkService.ts'
 
+/** The program that the check service runs beside the server: checks what it is sent, ends with its parent. */
 let index: CatalogIndex | undefined
 
-parentPort?.on('message', ({ id, document, catalog }: CheckTask) => {
+process.on('message', ({ id, document, catalog }: CheckTask) => {
   if (catalog) index = indexCatalog(catalog)
   let answer: CheckAnswer
   try {
@@ -14,5 +14,7 @@ parentPort?.on('message', ({ id, document, catalog }: CheckTask) => {
   } catch (error) {
     answer = { id, error: error instanceof Error ? (error.stack ?? error.message) : String(error) }
   }
-  parentPort?.postMessage(answer)
+  process.send?.(answer)
 })
+process.on('disconnect', () => process.exit())
+for (const signal of ['SIGINT', 'SIGTERM'] as const) process.on(signal, () => {})
