@@ -14,6 +14,7 @@ export interface Reading {
   flow(joint: string | undefined): Flow | undefined
   /** Worst open finding on a part, or on one of its connectors. */
   partSeverity(part: string): Severity | undefined
+  /** Worst open finding on a joint or on one of its connectors that holds at the chosen moment. */
   jointSeverity(joint: string | undefined): Severity | undefined
   hasDataPath(drive: string): boolean
   /** Rails that the device needs and that do not arrive. */
@@ -40,10 +41,12 @@ export function readResult(build: ResolvedBuild, result: CheckResult, moment: Mo
     const before = map.get(key)
     if (before === undefined || severityRank[severity] < severityRank[before]) map.set(key, severity)
   }
-  for (const { severity, subjects, accepted } of result.findings) {
+  for (const { severity, subjects, accepted, moment: at } of result.findings) {
     if (accepted) continue
+    const isNow = at === undefined || at === moment
     for (const { kind, part, connector, joint } of subjects) {
       if (kind === 'part' || kind === 'connector' || kind === 'conductor') worsen(parts, part, severity)
+      if (!isNow) continue
       if (kind === 'joint') worsen(joints, joint, severity)
       if (kind === 'connector' && part !== undefined && connector !== undefined)
         for (const { joint: held } of build.partById.get(part)?.connectorById.get(connector)?.joints ?? [])
@@ -65,9 +68,8 @@ export function readResult(build: ResolvedBuild, result: CheckResult, moment: Mo
   }
 }
 
-/** "2.0 A", or "5 V 1.2 A" where it is not the 12 V rail that is meant. */
+/** "2.0 A", or "1.2 A 5 V" where it is not the 12 V rail that is meant. */
 export function flowWords({ rail, current_A }: Flow): string {
-  const amperes = `${current_A < 0.1 ? current_A.toFixed(2) : current_A.toFixed(1)} A`
-  if (rail === '12V') return amperes
-  return `${rail === '5V' ? '5 V' : '3.3 V'} ${amperes}`
+  const amperes = `${current_A < 0.095 ? current_A.toFixed(2) : current_A.toFixed(1)} A`
+  return rail === '12V' ? amperes : `${amperes} ${rail.replace('V', ' V')}`
 }
