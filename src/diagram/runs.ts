@@ -1,5 +1,5 @@
 import type { Drawing, DrawnNode, DrawnRun } from '#shared/layout/drawing.ts'
-import { labelPoint, runPath, type RunCourse, type RunEnd } from '#shared/layout/route.ts'
+import { runPath, type RunCourse, type RunEnd } from '#shared/layout/route.ts'
 
 /** A run ready to be drawn. */
 export interface CanvasRun {
@@ -8,7 +8,7 @@ export interface CanvasRun {
   kind: DrawnRun['kind']
   carries: DrawnRun['carries']
   d: string
-  label: { x: number; y: number }
+  course: RunCourse
 }
 
 type Point = { x: number; y: number }
@@ -37,7 +37,7 @@ export function runMaker(drawing: Drawing) {
         kind: run.kind,
         carries: run.carries,
         d: runPath(course),
-        label: labelPoint(course),
+        course,
       }
     )
   }
@@ -47,7 +47,8 @@ export function runMaker(drawing: Drawing) {
     const to = endOf(nodes.get(run.to.node), run.to.port, shifts)
     if (!from || !to) return undefined
     const moved = shifts.has(run.from.node) || shifts.has(run.to.node)
-    return run.via && !moved ? { from, to, via: run.via } : { from, to }
+    if (moved) return { from, to }
+    return { from, to, ...(run.via && { via: run.via }), ...(run.bends && { bends: run.bends }) }
   }
 
   const all = (): CanvasRun[] => drawing.runs.flatMap((run) => make(run) ?? [])
