@@ -28,7 +28,7 @@ export const bayConflict = defineRule<Facts>({
     switch (facts.kind) {
       case 'shared':
         return {
-          message: `${refsOf(facts.drives)} are all in bay ${facts.slot} of ${nameOf(facts.case)}.`,
+          message: `${refsOf(facts.drives)} share bay ${facts.slot} of ${nameOf(facts.case)}.`,
           remedy: 'Move all but one of them to free bays.',
         }
       case 'elsewhere':
@@ -38,7 +38,7 @@ export const bayConflict = defineRule<Facts>({
         }
       case 'backplanes':
         return {
-          message: `${refsOf(facts.backplanes)} both serve bay ${facts.slot} of ${nameOf(facts.case)}.`,
+          message: `${refsOf(facts.backplanes)} serve the same bay, ${facts.slot} of ${nameOf(facts.case)}.`,
           remedy: 'State for each backplane the first bay that it serves, so that none overlap.',
         }
     }

@@ -21,7 +21,8 @@ export const breakoutReversed = defineRule<Facts>({
     commonPractice: true,
   },
   check({ data }) {
-    return data.reversals.map(({ cable, enteredAt }) => {
+    const byCable = new Map(data.reversals.map(({ cable, enteredAt }) => [cable, enteredAt] as const).reverse())
+    return [...byCable].map(([cable, enteredAt]) => {
       const drives = [...new Set(data.paths.filter((path) => path.through.includes(cable)).map((path) => path.drive))]
       return {
         severity: 'fault',
@@ -32,14 +33,17 @@ export const breakoutReversed = defineRule<Facts>({
   },
   words({ facts: { cable, enteredAt, drives } }) {
     const isForward = cable.model.cable?.direction === 'forward'
+    const joint = enteredAt.joints.find(({ mating }) => mating.lanes > 0)
+    const other = joint && (joint.a === enteredAt ? joint.b : joint.a)
+    const seat = other ? `${enteredAt.connector.label} sits at ${placeOf(other)}` : enteredAt.connector.label
     const behind = drives.length > 0 ? ` ${refsOf(drives)} will not be seen.` : ''
     return isForward
       ? {
-          message: `${nameOf(cable)} is a forward breakout (multilane end at the controller), but its leg at ${placeOf(enteredAt)} faces the controller.${behind}`,
+          message: `${nameOf(cable)} is a forward breakout (multilane end at the controller), but its ${seat} on the controller’s side.${behind}`,
           remedy: 'Use a reverse breakout here (legs at the host ports, multilane end at the backplane).',
         }
       : {
-          message: `${nameOf(cable)} is a reverse breakout (legs at host ports), but its multilane end at ${placeOf(enteredAt)} faces the controller.${behind}`,
+          message: `${nameOf(cable)} is a reverse breakout (legs at host ports), but its multilane end ${seat} on the controller’s side.${behind}`,
           remedy: 'Use a forward breakout here (multilane end at the controller, legs at the drives).',
         }
   },
