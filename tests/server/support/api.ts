@@ -68,8 +68,9 @@ export async function startApi(
     const issued = await context.database.transaction((transaction) => openSession(context, user, transaction))
     const client = makeClient(url)
     client.user = user
-    client.cookies.set('bayloom-access', issued.accessToken)
-    client.cookies.set('bayloom-refresh', issued.refreshToken ?? '')
+    const prefix = config.publicUrl?.startsWith('https:') ? '__Host-' : ''
+    client.cookies.set(`${prefix}bayloom-access`, issued.accessToken)
+    client.cookies.set(`${prefix}bayloom-refresh`, issued.refreshToken ?? '')
     await client.refreshToken()
     return client
   }
