@@ -42,16 +42,20 @@ export function regionOf(part: ResolvedPart): Region {
 }
 
 /** The parts whose power connectors all take power, unless their wiring says otherwise. */
-const takers = new Set(['fan', 'load', 'drive', 'controller', 'expander', 'backplane'])
+const takers = new Set(['fan', 'load', 'drive', 'controller', 'expander'])
 
-/** Ids of connectors that a part feeds: everything from a supply, and whatever its wiring leads to. */
+/**
+ * Ids of connectors that a part feeds: everything from a supply, and whatever the wiring of a lead leads to. Boards
+ * and backplanes tie several inlets together inside, so there it is fan headers and bays that are fed.
+ */
 export function outletsOf(part: ResolvedPart): ReadonlySet<string> {
-  const { model, connectors } = part
-  const power = connectors.filter(carriesPower).map((connector) => connector.connector.id)
-  if (model.kind === 'supply') return new Set(power)
+  const { model } = part
+  const power = part.connectors.filter(carriesPower)
+  const ids = (connectors: readonly ResolvedConnector[]) => new Set(connectors.map(({ connector }) => connector.id))
+  if (model.kind === 'supply') return ids(power)
+  if (model.kind === 'board') return ids(power.filter(({ connector }) => /^(fan|out)/.test(connector.id)))
+  if (model.kind === 'backplane') return ids(power.filter(({ connector }) => connector.bay !== undefined))
   const fed = model.wiring.filter((conductor) => conductor.line !== 'return').map((conductor) => conductor.to)
   if (fed.length > 0) return new Set(fed)
-  if (takers.has(model.kind)) return new Set()
-  if (model.kind === 'board') return new Set(power.filter((id) => id.startsWith('fan')))
-  return new Set(power.slice(1))
+  return takers.has(model.kind) ? new Set() : ids(power.slice(1))
 }

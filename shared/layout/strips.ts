@@ -1,5 +1,5 @@
 import type { ResolvedBuild, ResolvedConnector, ResolvedPart } from '../build/resolve.ts'
-import { carriesData, carriesPower, outletsOf } from './carries.ts'
+import { carriesData, carriesPower } from './carries.ts'
 import type { DrawnNode } from './drawing.ts'
 import { snap, strip } from './metrics.ts'
 import { bayConnectors, groupRows, seatedDrive, type Row, type RowGroup } from './rows.ts'
@@ -156,7 +156,6 @@ function addBackplanePorts(places: Places, frame: DrawnNode, part: ResolvedPart,
     part.connectors.filter(({ connector }) => connector.bay === undefined),
   )
   const inside = spots.filter(({ row }) => row.backplane === part)
-  const outlets = outletsOf(part)
   const bays = bayConnectors(part)
   const heights = spread(frame.height, bays.length)
   bays.forEach((connector, i) => {
@@ -166,8 +165,7 @@ function addBackplanePorts(places: Places, frame: DrawnNode, part: ResolvedPart,
       inside.find(({ row }) => seated !== undefined && row.drive === seated) ??
       inside.find(({ row }) => row.slot === slot)
     const y = spot ? spot.node.y + spot.node.height / 2 - frame.y : (heights[i] ?? 0)
-    if (carriesPower(connector) || outlets.has(connector.connector.id))
-      addPort(places, frame, connector, 'power', 'right', strip.seatInset, y)
+    if (carriesPower(connector)) addPort(places, frame, connector, 'power', 'right', strip.seatInset, y)
     if (carriesData(connector)) addPort(places, frame, connector, 'data', 'left', frame.width - strip.seatInset, y)
   })
 }

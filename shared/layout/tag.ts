@@ -1,5 +1,5 @@
 import type { ResolvedConnector, ResolvedPart } from '../build/resolve.ts'
-import { carriesOf } from './carries.ts'
+import { carriesOf, jointCarries } from './carries.ts'
 import type { DrawnNode, DrawnPort } from './drawing.ts'
 import { snap, stub, tag } from './metrics.ts'
 
@@ -38,7 +38,7 @@ export function addPort(
     y,
     label,
     gender: connector.type.side === 'plug' || connector.type.side === 'edge' ? 'plug' : 'receptacle',
-    joined: connector.joints.length > 0,
+    joined: connector.joints.some((joint) => carries !== 'both' || [as, 'both'].includes(jointCarries(joint))),
   }
   node.ports.push(port)
   places[as].set(connector.index, { node, port })

@@ -1,6 +1,7 @@
 import type { ResolvedBuild } from '../../build/resolve.ts'
-import type { DrawnNode } from '../../layout/drawing.ts'
+import type { DrawnNode, DrawnPort } from '../../layout/drawing.ts'
 import { strip } from '../../layout/metrics.ts'
+import type { Rail } from '../../quantity/rails.ts'
 import { box, element, group, line, text } from '../svg.ts'
 import { textWidth } from '../text/textWidth.ts'
 import { driveWords, serialTail, tagWords } from '../words.ts'
@@ -104,33 +105,53 @@ export function drawRow(node: DrawnNode, frame: DrawnNode | undefined, build: Re
     }),
     text(textX, y + 35, driveWords(part.model), { size: 11.5, fill: palette.soft, width: width - 64 - tailWidth }),
     text(x + width - 14, y + 35, tail, { size: 11.5, weight: 600, fill: palette.ink, anchor: 'end' }),
-    severity ? severityTag(textX + textWidth(ref, 13, 700) + 12, y + 18, severity) : '',
+    severity
+      ? severityTag(
+          textX + textWidth(ref, 13, 700) + 12,
+          y + 18,
+          severity,
+          10.5,
+          brokenWords(node, reading) || severity,
+        )
+      : '',
     ...node.ports.map((port) =>
       connectorMark(x + port.x, y + port.y, port.gender, port.joined ? palette.ink : palette.soft),
     ),
-    ...openEnds(node, frame, part.part.id, reading),
+    ...openEnds(node, frame),
   ]
   return group({}, inside)
 }
 
+const fedWords = (missing: readonly Rail[]): string => {
+  if (missing.length === 0) return ''
+  return missing.length > 1 || missing[0] === '12V' ? 'not fed' : `${missing[0]?.replace('V', ' V')} missing`
+}
+
+/** What does not arrive although something is joined: said in the row, since a run stands where an open end would. */
+function brokenWords(node: DrawnNode, reading: Reading): string {
+  const [power, data] = [node.ports.find(isPowerPort), node.ports.find(isDataPort)]
+  return [
+    power?.joined ? fedWords(reading.missingRails(node.part)) : '',
+    data?.joined && !reading.hasDataPath(node.part) ? 'no data path' : '',
+  ]
+    .filter(Boolean)
+    .join(', ')
+}
+
+const isPowerPort = (port: DrawnPort): boolean => port.side === 'left'
+const isDataPort = (port: DrawnPort): boolean => port.side === 'right'
+
 /** What the drive has no partner for, in words outside the strip. */
-function openEnds(node: DrawnNode, frame: DrawnNode | undefined, drive: string, reading: Reading): string[] {
+function openEnds(node: DrawnNode, frame: DrawnNode | undefined): string[] {
   const left = frame?.x ?? node.x
   const right = frame ? frame.x + frame.width : node.x + node.width
   const ends: string[] = []
-  const lead = (from: number, to: number, y: number) => line(from, y, to, y, palette.danger, 1.25)
-  const power = node.ports.find((port) => port.side === 'left')
-  const missing = reading.missingRails(drive)
-  if (power && missing.length > 0) {
-    const isBare = missing.includes('12V') || missing.length > 1
-    const y = node.y + power.y + (power.joined ? 12 : 0)
-    if (!power.joined) ends.push(lead(left, node.x - 4, y))
-    ends.push(openEnd(left, y, isBare ? 'not fed' : `${missing[0] === '5V' ? '5 V' : '3.3 V'} missing`, 'left'))
-  }
-  const data = node.ports.find((port) => port.side === 'right')
-  if (data && !reading.hasDataPath(drive)) {
-    ends.push(lead(node.x + node.width + 4, right, node.y + data.y))
-    ends.push(openEnd(right, node.y + data.y, 'no data path', 'right'))
+  const stretch = (from: number, to: number, y: number) => line(from, y, to, y, palette.danger, 1.25)
+  for (const port of node.ports) {
+    const y = node.y + port.y
+    if (port.joined) continue
+    if (isPowerPort(port)) ends.push(stretch(left, node.x - 4, y), openEnd(left, y, 'not fed', 'left'))
+    else ends.push(stretch(node.x + node.width + 4, right, y), openEnd(right, y, 'no data path', 'right'))
   }
   return ends
 }

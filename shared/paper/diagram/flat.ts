@@ -123,7 +123,7 @@ function drawDiagram(build: ResolvedBuild, drawing: Drawing, reading: Reading): 
     ...of('empty-bay').map(drawEmptyBay),
     ...of('drive-row').map((node) => drawRow(node, frameOf(node), build, reading)),
     ...of('part').map((node) => drawTag(node, build, reading)),
-    ...of('stub').map((node) => drawStub(node, build, reading)),
+    ...of('stub').map((node) => drawStub(node, build)),
     drawAmperes(drawing, reading),
   ]
 }
@@ -132,7 +132,9 @@ function drawDiagram(build: ResolvedBuild, drawing: Drawing, reading: Reading): 
 function header({ document, result, revision, date }: FlatInput, moment: string, width: number): Block {
   const limits = withinLimits(result)
   const severity = result.worst ?? 'note'
-  const sentence = result.weakestHop ?? (limits.isWithin ? 'Every hop is within the stated limits.' : '')
+  const worst = result.findings.find((finding) => !finding.accepted && finding.severity === result.worst)
+  const isQuiet = limits.isWithin && result.counts.caution === 0
+  const sentence = result.weakestHop ?? (isQuiet ? 'Every hop is within the stated limits.' : (worst?.message ?? ''))
   const lines = wrapText(sentence, Math.min(width, 1160) - 52, 14, 600, 3)
   const subtitle = [
     document.machine ? `machine ${document.machine}` : '',

@@ -20,11 +20,11 @@ export function severityShape(x: number, y: number, severity: Severity): string 
   }
 }
 
-/** Shape and word together: colour never speaks alone. `y` is the baseline of the word. */
-export function severityTag(x: number, y: number, severity: Severity, size = 10.5): string {
+/** Shape and word together: colour never speaks alone. `y` is the baseline; `words` may say more than the severity. */
+export function severityTag(x: number, y: number, severity: Severity, size = 10.5, words: string = severity): string {
   return group({}, [
     severityShape(x, y - 10, severity),
-    text(x + 16, y, severity, { size, weight: 600, fill: severityColour[severity], halo: palette.paper }),
+    text(x + 16, y, words, { size, weight: 600, fill: severityColour[severity], halo: palette.paper }),
   ])
 }
 

@@ -64,7 +64,7 @@ function drawSpare(node: DrawnNode, part: ResolvedPart): string {
   if (part.model.kind === 'supply' || part.model.kind === 'board') return ''
   const spare = node.ports.filter((port) => port.side === 'right' && port.carries === 'power' && !port.joined).length
   if (spare === 0) return ''
-  return text(node.x + pad, node.y + node.height - 8, `${counted(spare, 'outlet')} left`, {
+  return text(node.x + pad, node.y + node.height - 5, `${counted(spare, 'outlet')} left`, {
     size: 10.5,
     fill: palette.soft,
     width: node.width - 60,
@@ -90,14 +90,13 @@ function drawPort(node: DrawnNode, port: DrawnPort): string {
 }
 
 /** A power inlet of a part that lives on the data side. */
-export function drawStub(node: DrawnNode, build: ResolvedBuild, reading: Reading): string {
+export function drawStub(node: DrawnNode, build: ResolvedBuild): string {
   const part = build.partById.get(node.part)
   if (!part) return ''
   const { x, y, width, height } = node
   const inlet = node.ports.find((port) => port.side === 'left')
   const ref = part.part.ref
   const refWidth = textWidth(ref, 11.5, 700)
-  const severity = reading.partSeverity(node.part)
   const inside = [
     box(x, y, width, height, { fill: palette.card, stroke: palette.soft, strokeWidth: 1, radius: 14 }),
     text(x + 12, y + height / 2 + 4, ref, { size: 11.5, weight: 700, fill: palette.ink }),
@@ -111,6 +110,5 @@ export function drawStub(node: DrawnNode, build: ResolvedBuild, reading: Reading
     ),
   ]
   if (inlet && !inlet.joined) inside.push(openEnd(x - 4, y + inlet.y, 'not fed', 'left'))
-  else if (severity === 'danger') inside.push(severityTag(x + 8, y - 3, severity))
   return group({}, inside)
 }
