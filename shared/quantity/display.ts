@@ -1,3 +1,4 @@
+import { awgArea_mm2, gaugeOfArea } from '../electrical/copper.ts'
 import type { Quantity } from './quantity.ts'
 
 /** Units as they are written beside a figure. */
@@ -35,4 +36,18 @@ export function scaleQuantity(quantity: Quantity, factor: number): Quantity {
   if (quantity.low !== undefined) scaled.low = quantity.low * factor
   if (quantity.high !== undefined) scaled.high = quantity.high * factor
   return scaled
+}
+
+/** Wire size in both manners, the preferred one first: "18 AWG (0.823 mm²)". A given area has no exact gauge. */
+export function formatWire(
+  wire: { awg?: number; area_mm2?: number | null },
+  first: 'awg' | 'mm2',
+  locale?: string,
+): string | undefined {
+  const exact = wire.awg !== undefined
+  const area = exact ? awgArea_mm2(wire.awg!) : wire.area_mm2
+  if (area == null) return undefined
+  const areaWords = `${Number(area.toPrecision(3)).toLocaleString(locale)}\u00a0mm²`
+  const gaugeWords = `${exact ? wire.awg : `about ${gaugeOfArea(area)}`}\u00a0AWG`
+  return first === 'awg' ? `${gaugeWords} (${areaWords})` : `${areaWords} (${gaugeWords})`
 }

@@ -11,7 +11,9 @@ export function useCatalog() {
   const query = useQuery({ queryKey: catalogKey, queryFn: ({ signal }) => readCatalog(signal), staleTime: 5 * 60_000 })
   const index = computed<CatalogIndex | undefined>(() => query.data.value && indexCatalog(query.data.value))
   const model = (id: string): Model | undefined => index.value?.models.get(id)
-  const sourceTitle = (id: string | undefined): string | undefined =>
-    id === undefined ? undefined : index.value?.sources.get(id)?.title
+  const sourceTitle = (id: string | undefined): string | undefined => {
+    const source = id === undefined ? undefined : index.value?.sources.get(id)
+    return source && [source.title, source.clause].filter(Boolean).join(', ')
+  }
   return { ...query, catalog: query.data, index, model, sourceTitle }
 }
