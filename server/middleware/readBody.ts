@@ -17,9 +17,8 @@ const parsers = {
 
 /** Reads the JSON body of a request, within its limit of size, depth and text. */
 export async function readBody(request: Request, response: Response, limit: BodyLimit): Promise<unknown> {
-  const type = request.is('application/json')
-  if (type === null) return undefined
-  if (type === false) throw new Refusal('not-json')
+  if (!hasBody(request)) return undefined
+  if (!request.is('application/json')) throw new Refusal('not-json')
   await new Promise<void>((resolve, reject) =>
     parsers[limit](request, response, (error?: unknown) => (error ? reject(error as Error) : resolve())),
   )
@@ -27,6 +26,9 @@ export async function readBody(request: Request, response: Response, limit: Body
   refuseWild(body)
   return body
 }
+
+const hasBody = (request: Request): boolean =>
+  request.headers['transfer-encoding'] !== undefined || Number(request.headers['content-length'] ?? 0) > 0
 
 interface Place {
   value: unknown

@@ -8,6 +8,7 @@ export const testCable: ModelInput = {
   id: 'test-data-cable',
   kind: 'cable',
   name: 'Data cable of the tests',
+  cable: { length_mm: { value: 500, origin: 'guess' } },
   connectors: [
     { id: 'a', label: 'A', type: 'sata-data-receptacle' },
     { id: 'b', label: 'B', type: 'sata-data-receptacle' },
