@@ -7,6 +7,7 @@ import { maySleep } from './courses.ts'
 import { CurrentReader, hasStart, isSolidState, states } from './deviceCurrents.ts'
 import { deviceLoads } from './deviceLoads.ts'
 import { branchLoads } from './branchLoads.ts'
+import { indexDraws } from './downstream.ts'
 import { cutIslands, fillDraws, type Islands, scenarios } from './islands.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import { buildNetwork, type PowerNetwork } from './network.ts'
@@ -38,6 +39,7 @@ export function analysePower(build: ResolvedBuild, data: DataResult): PowerResul
     startPlan,
     network,
     draws,
+    behind: indexDraws(network, draws),
     reaches: (connector, rail) => network.byLine[lineIndex[rail]]!.plan.reached[connector.index] === 1,
   }
 }

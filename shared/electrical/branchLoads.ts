@@ -1,5 +1,6 @@
 import { branchCurrents, branchRange, islandOf, type SolvedLine } from './branchValues.ts'
 import type { Islands } from './islands.ts'
+import type { LineNetwork } from './network.ts'
 import type { ConductorLoad, ContactLoad, PowerResult } from './result.ts'
 
 /** What every contact and conductor carries. */
@@ -16,15 +17,15 @@ export function branchLoads(
     network.branches.forEach((branch, i) => {
       if (branch.kind === 'feed') return
       const island = islandOf(line, i, islands)
-      const loaded = island && island.draws.length > 0 ? island : undefined
-      const current_A = branchCurrents(line, i, loaded)
-      const range_A = branchRange(line, i, loaded)
+      const current_A = branchCurrents(line, i, island)
+      const range_A = branchRange(line, i, island)
       const resistance_ohm = network.new_ohm[i]!
       const about = line.about[i] === 1
       if (branch.kind === 'wire') {
         const { part, conductor, index, figures } = branch
         const { limit } = figures
         const load: ConductorLoad = {
+          branch: i,
           part,
           conductor,
           index,
@@ -43,6 +44,7 @@ export function branchLoads(
       const { joint, contacts: count, figures } = branch
       const { rating, weaker } = figures
       const load: ContactLoad = {
+        branch: i,
         joint,
         line: network.line,
         contacts: count,
@@ -51,7 +53,7 @@ export function branchLoads(
         resistance_ohm,
         limit_A: rating ? rating.value * count : null,
         limitLow_A: rating ? rating.low * count : null,
-        weaker: joint[weaker],
+        weaker: joint[weaker === 'alike' ? fedSide(network, i) : weaker],
         rating: rating?.figure ?? null,
         drop_V: current_A.map((current) => current * resistance_ohm),
         about: about || (rating?.about ?? false),
@@ -62,3 +64,7 @@ export function branchLoads(
   })
   return { contacts, conductors, byBranch }
 }
+
+/** The end of a contact that lies away from the source: where both ends are rated alike, the hop bears its name. */
+const fedSide = ({ plan, towardsSource }: LineNetwork, branch: number): 'a' | 'b' =>
+  towardsSource[plan.from[branch]!] === branch ? 'a' : 'b'

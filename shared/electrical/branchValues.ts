@@ -13,11 +13,12 @@ export interface SolvedLine {
   about: Uint8Array
 }
 
-/** The island that a branch belongs to; undefined where no power passes. */
+/** The island that a branch belongs to; undefined where nothing draws, so that no columns were solved. */
 export function islandOf({ network }: SolvedLine, branch: number, islands: Islands): Island | undefined {
   const { from, to } = network.plan
   const island = islands.of[to[branch]!] ?? islands.of[from[branch]!] ?? -1
-  return islands.all[island]
+  const found = islands.all[island]
+  return found && found.draws.length > 0 ? found : undefined
 }
 
 /** The column of each moment at which a branch carries most, relative to its first; -1 for branches without columns. */

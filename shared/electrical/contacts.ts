@@ -12,7 +12,8 @@ export interface ContactFigures {
   aged_ohm: number
   /** Of one contact; null where no rating is known. */
   rating: Taken | null
-  weaker: 'a' | 'b'
+  /** Side whose rating is lower. */
+  weaker: 'a' | 'b' | 'alike'
   about: boolean
 }
 
@@ -33,13 +34,15 @@ export class ContactReader {
     const gauge = Math.max(this.#gaugeAt(a, line), this.#gaugeAt(b, line))
     const ofA = this.#rating(a.type, gauge)
     const ofB = this.#rating(b.type, gauge)
-    const weaker = ofB !== null && (ofA === null || ofB.value < ofA.value) ? 'b' : 'a'
+    const a_A = ofA?.value ?? Infinity
+    const b_A = ofB?.value ?? Infinity
+    const weaker = a_A === b_A ? 'alike' : a_A < b_A ? 'a' : 'b'
     const one = this.#resistance(a.type)
     const other = this.#resistance(b.type)
     return {
       new_ohm: Math.max(one.new_ohm, other.new_ohm),
       aged_ohm: Math.max(one.aged_ohm, other.aged_ohm),
-      rating: weaker === 'a' ? ofA : ofB,
+      rating: weaker === 'b' ? ofB : ofA,
       weaker,
       about: one.about || other.about,
     }

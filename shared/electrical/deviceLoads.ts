@@ -33,6 +33,7 @@ export function deviceLoads(
         : [],
       voltage_V: new Float64Array(momentIds.length),
       aged_V: new Float64Array(momentIds.length),
+      atHigh_V: new Float64Array(momentIds.length),
       drop_V: {
         wire: new Float64Array(momentIds.length),
         contact: new Float64Array(momentIds.length),
@@ -56,7 +57,7 @@ function fillVoltages(
   supplied: SolvedLine,
   returned: SolvedLine,
   aged: readonly SolvedLine[],
-  { first }: Island,
+  { first, cases }: Island,
   { connector, rail }: Draw,
 ): void {
   const node = connector.index
@@ -71,6 +72,7 @@ function fillVoltages(
     let worst = first[m]!
     let lowest = Infinity
     let lowestAged = Infinity
+    let lowestAtHigh = Infinity
     for (let column = first[m]!; column < first[m + 1]!; column++) {
       const volts = seen(supplied.solution.voltage_V, returned.solution.voltage_V, column)
       if (volts < lowest) {
@@ -78,9 +80,12 @@ function fillVoltages(
         worst = column
       }
       lowestAged = Math.min(lowestAged, seen(agedRail, agedReturn, column))
+      const high = seen(supplied.solution.voltage_V, returned.solution.voltage_V, column + 2 * cases)
+      lowestAtHigh = Math.min(lowestAtHigh, high)
     }
     load.voltage_V[m] = lowest
     load.aged_V[m] = lowestAged
+    load.atHigh_V[m] = lowestAtHigh
     const path = pathToSource(supplied.network, supplied.columns, supplied.solution, node, worst)
     splitDrop(load, m, supplied, path, worst)
     load.drop_V.return[m] = -returned.solution.voltage_V[atReturn + worst]! || 0

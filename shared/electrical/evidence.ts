@@ -30,6 +30,27 @@ export function busiest({ startPlan }: PowerResult, { part, currents }: Draw, mo
     .reduce((most, taken) => (taken.value > most.value ? taken : most))
 }
 
+/** The load figure whose range, over all devices that share it, moves a sum most; null where none has a range. */
+export function loadFigureWithMostRange(
+  power: PowerResult,
+  draws: readonly Draw[],
+  moment: MomentId,
+): { figure: Figure; range: number } | null {
+  const ranges = new Map<Figure, { range: number; part: ResolvedPart }>()
+  for (const draw of draws) {
+    const { figure, low, high } = busiest(power, draw, moment)
+    const range = (high - low) * draw.share
+    const known = ranges.get(figure)
+    if (known) known.range += range
+    else ranges.set(figure, { range, part: draw.part })
+  }
+  let most: { figure: Figure; range: number } | null = null
+  for (const [figure, { range, part }] of ranges)
+    if (range > (most?.range ?? 0))
+      most = { figure: { ...figure, what: `${figure.what} of "${part.model.name}"` }, range }
+  return most
+}
+
 /** Seconds for which motors fed by these draws start. */
 export const longestStart_s = (draws: readonly Draw[]): number =>
   draws.reduce((most, { currents }) => Math.max(most, currents.start_s), 0)

@@ -78,11 +78,11 @@ function worstOf(
   judge: (moment: MomentId, load: number) => Verdict | null,
 ): Verdict | null {
   let worst: Verdict | null = null
-  momentIds.forEach((moment, index) => {
-    if (!applies.has(moment)) return
+  for (const [index, moment] of momentIds.entries()) {
+    if (!applies.has(moment)) continue
     const verdict = judge(moment, Math.abs(loads[index]!))
     if (verdict && (!worst || isWorse(verdict, worst))) worst = verdict
-  })
+  }
   return worst
 }
 

@@ -9,6 +9,12 @@ import { isStart } from './tolerance.ts'
 export const loadOfLimit = (load: number, limit: number, unit: WordUnit, about: boolean): string =>
   `${about ? 'about ' : ''}${amount(load, unit)} of ${amount(limit, unit)} (${amount((load / limit) * 100, '%')})`
 
+/** Two voltages told apart: to the hundredth of a volt, to the thousandth where that would show them alike. */
+export function twoVolts(one: number, other: number): [string, string] {
+  const decimals = one.toFixed(2) === other.toFixed(2) ? 3 : 2
+  return [`${one.toFixed(decimals)} V`, `${other.toFixed(decimals)} V`]
+}
+
 /** Why this much counts as this grave: lasting heat, seconds of a start, or little left. */
 export function gravity(severity: Severity, moment: MomentId, load: number, limit: number, allowance: number): string {
   if (load <= limit * (1 + 1e-9)) return 'within the limit, but with little left'

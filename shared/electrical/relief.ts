@@ -13,7 +13,7 @@ export interface Relief {
   move: number
   of: number
   /** What moves first, and where it fits. Absent where no open outlet has room. */
-  first?: { part: ResolvedPart; to: ResolvedConnector; left_A: number }
+  first?: { part: ResolvedPart; from: ResolvedConnector; to: ResolvedConnector; left_A: number }
 }
 
 /** Room that an outlet must have beyond the device's own current for a move to be worth proposing. */
@@ -36,8 +36,12 @@ export function findRelief(
   const first = loads[0]
   const outlet = first && feedingOutlet(first.draw)
   const spare = outlet && spareOutlets(power, outlet.type.id, rail, moment)[0]
-  if (!first || !spare || spare.left_A < first.load_A * comfort) return { move, of: loads.length }
-  return { move, of: loads.length, first: { part: first.draw.part, to: spare.connector, left_A: spare.left_A } }
+  if (!first || !outlet || !spare || spare.left_A < first.load_A * comfort) return { move, of: loads.length }
+  return {
+    move,
+    of: loads.length,
+    first: { part: first.draw.part, from: outlet, to: spare.connector, left_A: spare.left_A },
+  }
 }
 
 /** The connector that feeds a device at the place where it draws. */
@@ -47,9 +51,9 @@ export function feedingOutlet({ connector }: Draw): ResolvedConnector | undefine
 }
 
 /** The proposal as a sentence; empty where there is nothing to move. */
-export function reliefWords({ move, of, first }: Relief, hop: string): string {
+export function reliefWords({ move, of, first }: Relief, hop: ResolvedConnector): string {
   if (move === 0) return ''
-  if (!first) return `Feed ${counted(move, 'drive')} of these ${of} from a lead other than ${hop}.`
+  if (!first) return `Feed ${counted(move, 'drive')} of these ${of} another way than through ${placeOf(hop)}.`
   const rest = move > 1 ? ` and ${counted(move - 1, 'more drive')} to another lead` : ''
-  return `Move ${first.part.part.ref} from ${hop} to ${placeOf(first.to)}, which has ${amount(first.left_A, 'A')} left${rest}.`
+  return `Move ${first.part.part.ref} from ${placeOf(first.from)} to ${placeOf(first.to)}, which has ${amount(first.left_A, 'A')} left${rest}.`
 }

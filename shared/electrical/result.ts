@@ -17,6 +17,8 @@ export interface LoadRange {
 
 /** The contacts of one joint that carry one line. */
 export interface ContactLoad {
+  /** Branch of the line's network. */
+  branch: number
   joint: ResolvedJoint
   line: Line
   /** Contacts that meet: the fewer of both sides. */
@@ -31,7 +33,7 @@ export interface ContactLoad {
   limit_A: number | null
   /** The same at the low end of the rating. */
   limitLow_A: number | null
-  /** Side whose rating is lower. */
+  /** Side whose rating is lower; where both are alike, the side that is fed. */
   weaker: ResolvedConnector
   rating: Figure | null
   drop_V: PerMoment
@@ -40,6 +42,8 @@ export interface ContactLoad {
 
 /** One conductor of one part. `index` is its place in the model's `wiring`. */
 export interface ConductorLoad {
+  /** Branch of the line's network. */
+  branch: number
   part: ResolvedPart
   conductor: Conductor
   index: number
@@ -93,6 +97,8 @@ export interface DeviceLoad {
   voltage_V: PerMoment
   /** The same with every contact at the end of its life. */
   aged_V: PerMoment
+  /** The same with contacts as new and every load at its high end. */
+  atHigh_V: PerMoment
   drop_V: { wire: PerMoment; contact: PerMoment; return: PerMoment }
   /** Figures that its current at each moment was taken from. */
   figures: Partial<Record<MomentId, Figure>>
@@ -135,6 +141,8 @@ export interface PowerResult {
   network: PowerNetwork
   /** Every place where a device takes current, whether or not it flows. In the order of `devices`. */
   draws: readonly Draw[]
+  /** The draws whose current a branch of a line carries; for a branch of a loop, all that hang on the loop. */
+  behind(line: Line, branch: number): readonly Draw[]
   /** A supply rail reaches this connector. */
   reaches(connector: ResolvedConnector, rail: Rail): boolean
 }

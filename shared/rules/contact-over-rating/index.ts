@@ -3,7 +3,6 @@ import { jointSubject, partSubject } from '../../check/subjects.ts'
 import { counted, placeOf } from '../../check/words.ts'
 import type { Rail } from '../../quantity/rails.ts'
 import type { Draw } from '../../electrical/attach.ts'
-import { branchOf, drawsThrough } from '../../electrical/downstream.ts'
 import { loadFigures } from '../../electrical/evidence.ts'
 import { isWorse, judgeHeat, type Verdict } from '../../electrical/judge.ts'
 import { lineName } from '../../electrical/lines.ts'
@@ -53,7 +52,7 @@ export const contactOverRating = defineRule<Facts>({
       alsoOver.length > 0
         ? ` The same plug is short of room on ${alsoOver.map((line) => lineName[line]).join(' and ')}.`
         : ''
-    const move = reliefWords(relief, place)
+    const move = reliefWords(relief, contact.weaker)
     return {
       message:
         `${place} carries ${loadOfLimit(load, limit, 'A', about ?? false)} on ${lineName[contact.line]} ${atMoment(moment)}` +
@@ -71,11 +70,11 @@ function toFinding(
 ): RawFinding<Facts> {
   const worst = found.reduce((most, entry) => (isWorse(entry.verdict, most.verdict) ? entry : most))
   const { contact, verdict } = worst
-  const draws = drawsThrough(power, contact.line, branchOf(power, contact.line, contact))
+  const draws = power.behind(contact.line, contact.branch)
   const rail: Rail = contact.line === 'return' ? '12V' : contact.line
   return {
     severity: verdict.severity,
-    subjects: [jointSubject(contact.joint), partSubject(contact.weaker.part)],
+    subjects: [jointSubject(contact.joint), partSubject(contact.weaker.part), partSubject(otherEnd(contact).part)],
     moment: verdict.moment,
     load: verdict.load,
     limit: verdict.limit,
@@ -91,3 +90,5 @@ function toFinding(
     },
   }
 }
+
+const otherEnd = ({ joint, weaker }: ContactLoad) => (joint.a === weaker ? joint.b : joint.a)

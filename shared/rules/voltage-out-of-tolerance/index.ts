@@ -4,6 +4,7 @@ import { connectorSubject, partSubject } from '../../check/subjects.ts'
 import { amount, nameOf } from '../../check/words.ts'
 import { momentIndex } from '../../electrical/evidence.ts'
 import { lineName } from '../../electrical/lines.ts'
+import { twoVolts } from '../../electrical/loadWords.ts'
 import { atMoment } from '../../electrical/names.ts'
 import type { DeviceLoad, PowerResult } from '../../electrical/result.ts'
 import { allowedVoltage } from '../../electrical/tolerance.ts'
@@ -66,15 +67,16 @@ export const voltageOutOfTolerance = defineRule<Facts>({
     const m = momentIndex(moment)
     const { wire, contact, return: back } = device.drop_V
     const line = lineName[device.rail]
-    const sees = `${nameOf(device.part)} sees ${about ? 'about ' : ''}${amount(seen_V, 'V')} on ${line} ${atMoment(moment)}`
+    const [seen, allowed] = twoVolts(seen_V, allowed_V)
+    const sees = `${nameOf(device.part)} sees ${about ? 'about ' : ''}${seen} on ${line} ${atMoment(moment)}`
     if (seen_V > allowed_V)
       return {
-        message: `${sees}, more than the ${amount(allowed_V, 'V')} that it accepts (${figure.what}).`,
+        message: `${sees}, more than the ${allowed} that it accepts (${figure.what}).`,
         remedy: 'Check the set point of the supply before joining anything to it.',
       }
     return {
       message:
-        `${sees}${whenAged ? ' once the contacts on the way have aged' : ''}, below the ${amount(allowed_V, 'V')} that it needs (${figure.what}). ` +
+        `${sees}${whenAged ? ' once the contacts on the way have aged' : ''}, below the ${allowed} that it needs (${figure.what}). ` +
         `Lost on the way with contacts as new: ${amount(wire[m]!, 'V')} in wire, ${amount(contact[m]!, 'V')} in contacts, ${amount(back[m]!, 'V')} in the return.`,
       remedy: largestCause(wire[m]!, contact[m]!, back[m]!),
     }
@@ -101,8 +103,8 @@ function worstVoltage(
 ): (Omit<Facts, 'device'> & { severity: Severity }) | null {
   if (device.fedBy.length === 0) return null
   let worst: (Omit<Facts, 'device'> & { severity: Severity; by_V: number }) | null = null
-  momentIds.forEach((moment, m) => {
-    if (!applies.has(moment)) return
+  for (const [m, moment] of momentIds.entries()) {
+    if (!applies.has(moment)) continue
     const { lowest_V, highest_V, figure } = allowedVoltage(device, moment, settings)
     const fresh = device.voltage_V[m]!
     const aged = device.aged_V[m]!
@@ -118,6 +120,6 @@ function worstVoltage(
     if (fresh > highest_V + rounding_V) keep('fault', fresh, highest_V, false)
     else if (fresh < lowest_V - rounding_V) keep(moment === 'wake' ? 'caution' : 'fault', fresh, lowest_V, false)
     else if (aged < lowest_V - rounding_V) keep('caution', aged, lowest_V, true)
-  })
+  }
   return worst
 }

@@ -2,7 +2,6 @@ import type { ResolvedPart } from '../../build/resolve.ts'
 import { conductorSubject, partSubject } from '../../check/subjects.ts'
 import type { Draw } from '../../electrical/attach.ts'
 import { gaugeOf } from '../../electrical/conductors.ts'
-import { branchOf, drawsThrough } from '../../electrical/downstream.ts'
 import { loadFigures } from '../../electrical/evidence.ts'
 import { isWorse, judgeHeat, type Verdict } from '../../electrical/judge.ts'
 import { feeds, gravity, loadOfLimit } from '../../electrical/loadWords.ts'
@@ -64,7 +63,7 @@ function toFinding({ power }: RuleContext, found: readonly Found[]): RawFinding<
   const worst = found.reduce((most, entry) => (isWorse(entry.verdict, most.verdict) ? entry : most))
   const { conductor, verdict } = worst
   const { line } = conductor.conductor
-  const draws = drawsThrough(power, line, branchOf(power, line, conductor))
+  const draws = power.behind(line, conductor.branch)
   return {
     severity: verdict.severity,
     subjects: [
