@@ -12,13 +12,27 @@ export const closeAll = async () => {
   for (let close = closers.pop(); close; close = closers.pop()) await close()
 }
 
+/** Calls back when the npm that runs this command is gone, however it went: nobody could stop us through it any more. @param {() => void} onGone */
+const watchNpm = (onGone) => {
+  if (!process.env['npm_lifecycle_event']) return
+  const npm = process.ppid
+  const look = setInterval(() => {
+    if (process.ppid === npm) return
+    clearInterval(look)
+    onGone()
+  }, 100)
+  look.unref()
+}
+
 /**
- * Runs a command of set-up: closes what it opened, however it ends, and shows a refusal without a stack. On Ctrl-C or SIGTERM whatever
- * runs is ended first; `onSignal` may give the exit code then.
+ * Runs a command of set-up: closes what it opened, however it ends, and shows a refusal without a stack. On Ctrl-C, SIGTERM or the end of
+ * npm whatever runs is ended first; `onSignal` may give the exit code then.
  * @param {() => Promise<number>} command answers the exit code
  * @param {() => number} [onSignal]
  */
 export const main = async (command, onSignal = () => 130) => {
+  // A terminal or pipe that is gone must not keep us from closing what we opened.
+  for (const stream of [process.stdout, process.stderr]) stream.on('error', () => {})
   let stopping = false
   const stop = async () => {
     if (stopping) return
@@ -29,6 +43,7 @@ export const main = async (command, onSignal = () => 130) => {
     process.exit(code)
   }
   for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => void stop())
+  watchNpm(() => void stop())
   let code = 1
   try {
     code = await command()

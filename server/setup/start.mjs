@@ -29,16 +29,18 @@ const chooseAddress = async () => {
   return { host, port, url: `http://${reachable.includes(':') ? `[${reachable}]` : reachable}:${port}` }
 }
 
+/** What other starts of this checkout are told. */
+const about = /** @type {{ pid: number, address?: string }} */ ({ pid: process.pid })
+
 /** Where another start of this checkout serves already or is about to, waits for it and says where. */
 const lockOrJoin = async () => {
-  const about = /** @type {{ pid: number, address?: string }} */ ({ pid: process.pid })
   let told = false
   for (;;) {
     const lock = await tryLock('installation', about)
-    if (lock) return { about }
+    if (lock) return null
     const holder = await lockHolder('installation')
-    if (holder?.address) return { holder }
-    if (!told && holder) tell('waiting', `another start (process ${holder.pid}) is preparing this installation`)
+    if (holder?.address) return holder
+    if (!told && holder) tell('waiting', `another start (process ${holder.pid}) starts or stops here; waiting for it`)
     told = true
     await pause(300)
   }
@@ -60,8 +62,6 @@ const showAddress = async (url) => {
   console.log('  Ctrl-C stops it.\n')
 }
 
-let serving = false
-
 await main(
   async () => {
     const from = performance.now()
@@ -69,8 +69,8 @@ await main(
     makeDataFolder()
     loadEnvironment()
     await step('Node.js', checkNodeVersion)
-    const { about, holder } = await lockOrJoin()
-    if (!about) {
+    const holder = await lockOrJoin()
+    if (holder) {
       console.log(`\n  Bayloom runs already from this folder: ${holder.address} (process ${holder.pid})\n`)
       return 0
     }
@@ -93,7 +93,6 @@ await main(
     await showAddress(url)
     tell('', `ready in ${((performance.now() - from) / 1000).toFixed(1)} s`)
     about.address = url
-    serving = true
     const code = await server.ended
     throw new Refusal(
       `The server ended by itself with ${code}. Its log is .data/server.log; start again with npm start.`,
@@ -101,6 +100,8 @@ await main(
   },
   () => {
     console.log('\n  stopping the server and the database')
-    return serving ? 0 : 130
+    const served = about.address !== undefined
+    delete about.address
+    return served ? 0 : 130
   },
 )
