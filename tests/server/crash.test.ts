@@ -1,0 +1,95 @@
+import pg from 'pg'
+import { afterAll, beforeAll, expect, test } from 'vitest'
+import { apply } from '#shared/build/apply.ts'
+import type { BuildDocument } from '#shared/build/document.ts'
+import type { Edit } from '#shared/build/changes.ts'
+import { openBuildSchema, saveAnswerSchema } from '#shared/contract/build.ts'
+import { contentHash } from '../../server/services/contentHash.ts'
+import { startProduct, type Product } from '../helpers/server.ts'
+import { makeClient, type Client } from './support/api.ts'
+import { addCable, cablesDocument, edit, save } from './support/documents.ts'
+
+let product: Product
+let database: pg.Client
+beforeAll(async () => {
+  product = await startProduct({ demo: false })
+  database = new pg.Client({ connectionString: product.databaseUrl })
+  await database.connect()
+})
+afterAll(async () => {
+  await database.end()
+  await product.stop()
+})
+
+async function register(): Promise<Client> {
+  const client = makeClient(product.url)
+  await client.refreshToken()
+  const account = { email: 'crash@example.org', name: 'Crash', password: 'a reel of leader tape' }
+  expect((await client.post('/api/accounts', account)).status).toBe(201)
+  await client.refreshToken()
+  return client
+}
+
+interface Row {
+  revision: number
+  document: BuildDocument
+  hash: string
+  edits: Edit[]
+}
+
+test('a server killed in the middle of saves loses none that it acknowledged and leaves none half', async () => {
+  const client = await register()
+  const made = await client.post('/api/builds/import', { document: cablesDocument('Killed', 3) })
+  const { id } = openBuildSchema.parse(made.body)
+  const acknowledged = new Map<number, string>()
+  let number = 10
+
+  for (let round = 0; round < 3; round++) {
+    const { revision } = openBuildSchema.parse((await client.get(`/api/builds/${id}`)).body)
+    const goal = acknowledged.size + 5 + round
+    let killed: Promise<void> | undefined
+    const saver = async () => {
+      while (!killed) {
+        const request = save(revision, edit(`Add W${++number}`, addCable(number)))
+        const response = await client.post(`/api/builds/${id}/revisions`, request).catch(() => null)
+        if (response?.status !== 201) continue
+        acknowledged.set(saveAnswerSchema.parse(response.body).revision, request.requestId)
+        if (acknowledged.size >= goal) killed ??= product.kill()
+      }
+    }
+    await Promise.all([saver(), saver(), saver(), saver()])
+    await killed
+    await product.start()
+  }
+
+  const rows = (
+    await database.query<Row & { request_id: string }>(
+      'SELECT revision, document, hash, edits, request_id FROM build_revisions WHERE build_id = $1 ORDER BY revision',
+      [id],
+    )
+  ).rows
+  for (const [revision, requestId] of acknowledged) expect(rows[revision - 1]?.request_id).toBe(requestId)
+  expect(rows.map((row) => row.revision)).toEqual(rows.map((_, i) => i + 1))
+  for (const [i, row] of rows.entries()) {
+    expect(row.hash).toBe(contentHash(row.document))
+    const before = rows[i - 1]
+    if (before)
+      expect(row.document).toEqual(
+        apply(
+          before.document,
+          row.edits.flatMap((done) => done.changes),
+        ),
+      )
+  }
+  const newest = await client.get(`/api/builds/${id}`)
+  expect(openBuildSchema.parse(newest.body).revision).toBe(rows.length)
+})
+
+test('a session outlives the server that opened it', async () => {
+  const client = makeClient(product.url)
+  await client.refreshToken()
+  await client.post('/api/session', { email: 'crash@example.org', password: 'a reel of leader tape' })
+  await product.kill()
+  await product.start()
+  expect((await client.get('/api/builds')).status).toBe(200)
+})
