@@ -170,14 +170,15 @@ const slotWeight = 20
 
 /** Runs that lie within one loom and lead away from the strip, column by column. */
 function linksOf(runs: readonly PlacedRun[], columns: ReadonlyMap<DrawnNode, number>, side: 'left' | 'right'): Link[] {
-  return runs.flatMap(({ run, from, to, inSlot }) => {
+  const links: Link[] = []
+  for (const { run, from, to, inSlot } of runs) {
     const [near, far] = side === 'left' ? [to, from] : [from, to]
     const column = columns.get(far.node)
-    const nearIsFrame = near.node.kind !== 'part' && near.node.kind !== 'stub'
-    if (column === undefined || !(nearIsFrame || columns.has(near.node))) return []
-    if ((columns.get(near.node) ?? -1) >= column) return []
-    return [{ run, near, far, weight: inSlot ? slotWeight : 1 }]
-  })
+    const isFrame = near.node.kind !== 'part' && near.node.kind !== 'stub'
+    if (column === undefined || !(isFrame || columns.has(near.node))) continue
+    if ((columns.get(near.node) ?? -1) < column) links.push({ run, near, far, weight: inSlot ? slotWeight : 1 })
+  }
+  return links
 }
 
 function boundsOf(nodes: readonly DrawnNode[]): Bounds {

@@ -22,29 +22,26 @@ const edge = 20
  */
 export function spreadBends(runs: readonly PlacedRun[]): void {
   const gaps = new Map<string, Crossing[]>()
-  for (const placed of runs)
-    for (const crossing of crossingsOf(placed)) {
-      const { run, x0, x1, y0, y1 } = crossing
+  for (const placed of runs) {
+    const { run, from, to } = placed
+    if (run.kind === 'seat') continue
+    const via = run.via ?? []
+    for (let gap = 0; gap <= via.length / 2; gap++) {
+      const start = via[2 * gap - 1]
+      const end = via[2 * gap]
+      const x0 = start?.x ?? from.node.x + from.port.x
+      const y0 = start?.y ?? from.node.y + from.port.y
+      const x1 = end?.x ?? to.node.x + to.port.x
+      const y1 = end?.y ?? to.node.y + to.port.y
       if (x1 <= x0 || Math.abs(y1 - y0) < leastRise) continue
       const key = `${run.carries === 'power' ? x0 : x1} ${y1 > y0 ? 'falls' : 'climbs'}`
+      const crossing = { run, gap, x0, y0, x1, y1 }
       const list = gaps.get(key)
       if (list) list.push(crossing)
       else gaps.set(key, [crossing])
     }
-  for (const crossings of gaps.values()) for (const cluster of clustersOf(crossings)) spread(cluster)
-}
-
-function crossingsOf({ run, from, to }: PlacedRun): Crossing[] {
-  if (run.kind === 'seat') return []
-  const start = { x: from.node.x + from.port.x, y: from.node.y + from.port.y }
-  const end = { x: to.node.x + to.port.x, y: to.node.y + to.port.y }
-  const points = [start, ...(run.via ?? []), end]
-  const crossings: Crossing[] = []
-  for (let i = 0; i + 1 < points.length; i += 2) {
-    const [a, b] = [points[i] ?? start, points[i + 1] ?? end]
-    crossings.push({ run, gap: i / 2, x0: a.x, y0: a.y, x1: b.x, y1: b.y })
   }
-  return crossings
+  for (const crossings of gaps.values()) for (const cluster of clustersOf(crossings)) spread(cluster)
 }
 
 /** Crossings whose heights overlap, directly or through others. */

@@ -204,10 +204,12 @@ describe('any document', () => {
         expect(clashes(drawing)).toEqual([])
         expect([...drawnCounts(drawing)].sort()).toEqual([...connectorCounts(build)].sort())
         expect(drawing.runs.filter((run) => run.id === run.joint)).toHaveLength(build.joints.length)
+        expect(new Set(drawing.runs.map((run) => run.id)).size).toBe(drawing.runs.length)
+        expect(new Set(drawing.nodes.map((node) => node.id)).size).toBe(drawing.nodes.length)
         expect(arrange(build)).toEqual(drawing)
         for (const { x, y } of drawing.nodes) expect(Number.isFinite(x) && Number.isFinite(y)).toBe(true)
       }),
-      { numRuns: 300 },
+      { numRuns: 150 },
     )
   })
 
