@@ -2,8 +2,8 @@ import type { Quantity } from '../quantity/quantity.ts'
 import { figuresIn } from './figures.ts'
 import type { Model } from './model.ts'
 
-/** An id made of a name, not among the taken ones. */
-export function idOfName(name: string, taken: ReadonlySet<string>): string {
+/** An id made of a name, not among the taken ones; own models carry "own-" so that they never hide a shared one. */
+export function idOfName(name: string, taken: ReadonlySet<string>, prefix: 'own-' | '' = 'own-'): string {
   const plain = name
     .normalize('NFKD')
     .toLowerCase()
@@ -13,7 +13,7 @@ export function idOfName(name: string, taken: ReadonlySet<string>): string {
     .replace(/-+/g, '-')
     .slice(0, 48)
     .replace(/^[-.]+|[-.]+$/g, '')
-  const base = `own-${plain || 'model'}`
+  const base = `${prefix}${plain || 'model'}`
   if (!taken.has(base)) return base
   let number = 2
   while (taken.has(`${base}-${number}`)) number++

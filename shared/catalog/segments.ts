@@ -6,37 +6,36 @@ export interface Segment {
   from: string
   to: string
   conductors: Conductor[]
+  /** Where its conductors stand in the model's wiring. */
+  indexes: number[]
   /** Where all its wires share it. */
   awg: number | undefined
-  length_mm: Quantity | undefined
+  length_mm: Quantity
 }
 
 /** The pieces of cable of a model that are made of wire, in the order of its wiring. */
 export function wireSegments(model: Model): Segment[] {
-  const byPair = new Map<string, Conductor[]>()
-  for (const conductor of model.wiring) {
-    if (!conductor.length_mm) continue
-    const pair = `${conductor.from} ${conductor.to}`
-    byPair.set(pair, [...(byPair.get(pair) ?? []), conductor])
-  }
-  return [...byPair.values()].map((conductors) => {
-    const { from, to, awg, length_mm } = conductors[0]!
-    const alike = conductors.every((conductor) => conductor.awg === awg)
-    return { from, to, conductors, awg: alike ? awg : undefined, length_mm }
+  const byPair = new Map<string, Segment>()
+  model.wiring.forEach((conductor, i) => {
+    const { from, to, awg, length_mm } = conductor
+    if (!length_mm) return
+    const piece = byPair.get(`${from} ${to}`)
+    if (!piece) byPair.set(`${from} ${to}`, { from, to, conductors: [conductor], indexes: [i], awg, length_mm })
+    else {
+      piece.conductors.push(conductor)
+      piece.indexes.push(i)
+      if (piece.awg !== awg) piece.awg = undefined
+    }
   })
+  return [...byPair.values()]
 }
 
-/** The model with another length or gauge on one piece of cable. */
-export function withSegment(
-  model: Model,
-  piece: { from: string; to: string },
-  change: { length_mm?: Quantity; awg?: number },
-): Model {
+/** The model with another gauge on one piece of cable. */
+export function withGauge(model: Model, piece: { from: string; to: string }, awg: number): Model {
   const wiring = model.wiring.map((conductor) => {
     if (conductor.from !== piece.from || conductor.to !== piece.to || !conductor.length_mm) return conductor
-    const changed = { ...conductor, ...change }
-    if (change.awg !== undefined) delete changed.area_mm2
-    return changed
+    const { area_mm2: _before, ...rest } = conductor
+    return { ...rest, awg }
   })
   return { ...model, wiring }
 }
