@@ -2,6 +2,7 @@ import { definePreset } from '@primeuix/themes'
 import base from '@primeuix/themes/aura/base'
 import button from '@primeuix/themes/aura/button'
 import checkbox from '@primeuix/themes/aura/checkbox'
+import datatable from '@primeuix/themes/aura/datatable'
 import dialog from '@primeuix/themes/aura/dialog'
 import drawer from '@primeuix/themes/aura/drawer'
 import inputnumber from '@primeuix/themes/aura/inputnumber'
@@ -20,6 +21,7 @@ import textarea from '@primeuix/themes/aura/textarea'
 import togglebutton from '@primeuix/themes/aura/togglebutton'
 import toggleswitch from '@primeuix/themes/aura/toggleswitch'
 import tooltip from '@primeuix/themes/aura/tooltip'
+import virtualscroller from '@primeuix/themes/aura/virtualscroller'
 
 /** A ten-step scale of one hue, from its wash to its strongest. */
 const scale = (wash: string, line: string, plain: string, strong: string) => ({
@@ -50,6 +52,7 @@ export const preset = definePreset(
     components: {
       button,
       checkbox,
+      datatable,
       dialog,
       drawer,
       inputnumber,
@@ -68,6 +71,7 @@ export const preset = definePreset(
       togglebutton,
       toggleswitch,
       tooltip,
+      virtualscroller,
     },
   },
   {

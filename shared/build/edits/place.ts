@@ -23,20 +23,21 @@ export function modelOf(build: ResolvedBuild, id: string): Model | undefined {
 
 /**
  * Adds parts of one model. Drives go into the next free bays that take them and are seated where a backplane stands
- * behind; a backplane takes the next bays that none serves; a lone part goes where it was dropped.
+ * behind; a backplane takes the next bays that none serves; a lone part goes where it was dropped. A model from a
+ * person's own library comes into the document with its first part.
  */
 export function addParts(
   build: ResolvedBuild,
   makeId: MakeId,
-  modelId: string,
+  wantedModel: string | Model,
   placement: Placement = {},
 ): EditOutcome {
-  const model = modelOf(build, modelId)
+  const model = typeof wantedModel === 'string' ? modelOf(build, wantedModel) : wantedModel
   if (!model) return refuse('This model is no longer in the catalog.')
   const wanted = Math.max(1, Math.floor(placement.count ?? 1))
   const bays = nextBays(build, model, placement.from)
   const refs = new Set(build.document.parts.map((part) => part.ref))
-  const changes: Change[] = []
+  const changes: Change[] = modelOf(build, model.id) ? [] : [{ op: 'putModel', model }]
   const added: Part[] = []
   for (let i = 0; i < wanted; i++) {
     const ref = nextRef(model.kind, refs)
@@ -44,7 +45,7 @@ export function addParts(
     const place = bays.next()
     const part: Part = {
       id: makeId('p'),
-      model: modelId,
+      model: model.id,
       ref,
       ...(place && { bay: { case: place.case.part.id, slot: place.bay.slot } }),
       ...(placement.position && !place && { position: stagger(placement.position, i) }),

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { apply } from '#shared/build/apply.ts'
 import { addParts } from '#shared/build/edits/place.ts'
-import { buildOf, countingIds, looseParts } from './smallShop.ts'
+import { buildOf, countingIds, looseParts, smallCatalog } from './smallShop.ts'
 
 const add = (input: Parameters<typeof buildOf>[0], ...rest: [string, Parameters<typeof addParts>[3]?]) => {
   const build = buildOf(input)
@@ -72,6 +72,17 @@ describe('addParts', () => {
   it('never gives a number twice, not even one that was skipped', () => {
     const { document } = add({ parts: [{ id: 'w', model: 'lead-4', ref: 'W7' }] }, 'splitter-2', { count: 2 })
     expect(document.parts.map((part) => part.ref)).toEqual(['W7', 'W8', 'W9'])
+  })
+
+  it("brings a model of one's own library into the document, once", () => {
+    const build = buildOf()
+    const model = smallCatalog.models.get('splitter-2')
+    if (!model) throw new Error('no splitter')
+    const made = addParts(build, countingIds(), { ...model, id: 'own-splitter' }, { count: 2 })
+    if (!made.ok) throw new Error(made.reason)
+    const document = apply(build.document, made.edit.changes)
+    expect(document.models.map((one) => one.id)).toEqual(['own-splitter'])
+    expect(document.parts.map((part) => part.model)).toEqual(['own-splitter', 'own-splitter'])
   })
 
   it('refuses a model that is gone', () => {
