@@ -1,4 +1,4 @@
-import { quantitySchema, type Quantity } from '../quantity/quantity.ts'
+import type { Quantity } from '../quantity/quantity.ts'
 
 /** A figure somewhere inside a model, class or connector type, with the way to it. */
 export interface FoundFigure {
@@ -13,10 +13,12 @@ export function figuresIn(item: object): FoundFigure[] {
   return found
 }
 
+/** In a parsed item only figures have both fields. */
+const isFigure = (node: object): node is Quantity => 'value' in node && 'origin' in node
+
 function collect(node: object, path: (string | number)[], found: FoundFigure[]): void {
-  if ('value' in node && 'origin' in node) {
-    const parsed = quantitySchema.safeParse(node)
-    if (parsed.success) found.push({ path, quantity: parsed.data })
+  if (isFigure(node)) {
+    found.push({ path, quantity: node })
     return
   }
   for (const [key, value] of Object.entries(node))

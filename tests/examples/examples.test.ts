@@ -57,11 +57,12 @@ describe('examples', () => {
     )
   })
 
-  it('have machine identities and serials of their own; the two north rooms are one machine', () => {
+  it('have machine identities of their own; a machine before and after its mending is one', () => {
     const machines = ids.map((id) => load(id).machine)
     expect(machines.every(Boolean)).toBe(true)
-    expect(new Set(machines).size).toBe(ids.length - 1)
+    expect(new Set(machines).size).toBe(ids.length - 2)
     expect(load('north-room').machine).toBe(load('north-room-clean').machine)
+    expect(load('projection-24').machine).toBe(load('projection-24-first').machine)
   })
 
   it('holds sixty drives and about three hundred parts in the stress case', () => {
