@@ -7,7 +7,9 @@ import { energy_kWhPerYear, ups_VA } from '../electrical/wall.ts'
 import { rules } from '../rules/index.ts'
 import type { Rule, RuleContext } from '../rules/rule.ts'
 import { markAccepted } from './accept.ts'
+import { inFixedOrder, turnBack } from './canonical.ts'
 import { toDataPaths, toScanTime } from './dataPaths.ts'
+import { withUniqueKeys } from './keys.ts'
 import { ledgerRows } from './ledger.ts'
 import { momentResults, timelineSteps } from './moments.ts'
 import { sortFindings, summarise } from './order.ts'
@@ -29,14 +31,15 @@ export interface CheckOptions {
  * Never throws on a document that the schema accepts; references that lead nowhere are left out.
  */
 export function check(document: BuildDocument, catalog: CatalogIndex, options: CheckOptions = {}): CheckResult {
-  const build = resolve(document, catalog)
+  const { document: ordered, turned } = inFixedOrder(document)
+  const build = resolve(ordered, catalog)
   const data = analyseData(build)
   const power = analysePower(build, data)
   const context: RuleContext = { build, data, power }
   const found = runRules(options.rules ?? rules, context, options.strict ?? false)
-  const findings = sortFindings(markAccepted(found, document.accepted))
+  const findings = markAccepted(withUniqueKeys(sortFindings(found)), document.accepted)
   const ledger = ledgerRows(build, power)
-  const moments = momentResults(context.power)
+  const moments = turnBack(momentResults(power), turned)
   return {
     build: {
       name: document.name,
@@ -46,14 +49,14 @@ export function check(document: BuildDocument, catalog: CatalogIndex, options: C
       drives: build.parts.filter((part) => part.model.kind === 'drive').length,
     },
     ...summarise(findings),
-    weakestHop: weakestHop(ledger, moments, build.settings.derating),
+    weakestHop: weakestHop(ledger, build.settings.derating),
     findings,
     ledger,
     moments,
-    timeline: timelineSteps(context.power),
+    timeline: timelineSteps(power),
     dataPaths: toDataPaths(data),
     scan: toScanTime(data.scan),
-    energy_kWhPerYear: energy_kWhPerYear(context.power),
-    ups_VA: ups_VA(context.power),
+    energy_kWhPerYear: energy_kWhPerYear(power),
+    ups_VA: ups_VA(power),
   }
 }

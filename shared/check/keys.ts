@@ -11,6 +11,16 @@ export function findingKey(build: ResolvedBuild, rule: string, subjects: readonl
   return key.length > 300 ? key.slice(0, 300) : key
 }
 
+/** Tells findings apart that are known by the same key, as two joints drawn twice: the second gets "#2". */
+export function withUniqueKeys<T extends { key: string }>(findings: readonly T[]): T[] {
+  const seen = new Map<string, number>()
+  return findings.map((finding) => {
+    const count = (seen.get(finding.key) ?? 0) + 1
+    seen.set(finding.key, count)
+    return count === 1 ? finding : { ...finding, key: `${finding.key}#${count}` }
+  })
+}
+
 function subjectKey(build: ResolvedBuild, subject: Subject): string {
   const ref = subject.ref ?? 'build'
   switch (subject.kind) {

@@ -1,3 +1,5 @@
+import { mate } from '../../build/mating.ts'
+import { compareRefs } from '../../build/refOrder.ts'
 import type { ResolvedBuild, ResolvedConnector, ResolvedJoint } from '../../build/resolve.ts'
 import { connectorSubject, jointSubject } from '../../check/subjects.ts'
 import { listed, placeOf } from '../../check/words.ts'
@@ -30,7 +32,7 @@ export const wrongMating = defineRule<Facts>({
         remedy: 'Keep one of these joints and remove the others, or put a splitter between for power.',
       }
     }
-    const { a, b } = facts.joint
+    const [a, b] = endsOf(facts.joint)
     const both = `${placeOf(a)} and ${placeOf(b)}`
     if (facts.kind === 'self')
       return {
@@ -49,13 +51,20 @@ export const wrongMating = defineRule<Facts>({
   },
 })
 
+/** Both ends in the order of their designations, whichever way round the joint was drawn. */
+function endsOf({ a, b }: ResolvedJoint): [ResolvedConnector, ResolvedConnector] {
+  const order = compareRefs(a.part.part.ref, b.part.part.ref) || a.index - b.index
+  return order <= 0 ? [a, b] : [b, a]
+}
+
 function wrongJoints(build: ResolvedBuild): RawFinding<Facts>[] {
   return build.joints.flatMap((joint): RawFinding<Facts>[] => {
     const { a, b, mating } = joint
-    const subjects = [jointSubject(joint), connectorSubject(a), connectorSubject(b)]
+    const subjects = [jointSubject(joint), ...endsOf(joint).map(connectorSubject)]
     if (a.part === b.part) return [{ severity: 'fault', subjects, facts: { kind: 'self', joint } }]
     if (!mating.mates) {
-      const reason = mating.reason ?? 'the shells differ'
+      const [first, second] = endsOf(joint)
+      const reason = mate(first.type, second.type).reason ?? 'the shells differ'
       return [{ severity: 'fault', subjects, facts: { kind: 'mismatch', joint, reason } }]
     }
     const bothFeed = a.connector.feeds !== undefined && b.connector.feeds !== undefined
