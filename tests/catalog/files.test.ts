@@ -1,14 +1,25 @@
-import { cpSync, mkdtempSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs'
+import { cpSync, mkdirSync, mkdtempSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import { modelKinds } from '#shared/catalog/model.ts'
 import { catalogFolder, CatalogFilesError, loadCatalogFiles } from '../../server/services/catalogFiles.ts'
 
 let folder: string
 
+/** A catalog of one fan: small, so that each test reads its own. */
+const files = [
+  'classes.json',
+  'sources.json',
+  'connectors/fan-4-header.json',
+  'connectors/fan-4-receptacle.json',
+  'models/fan/fan-120.json',
+]
+
 beforeEach(() => {
   folder = mkdtempSync(join(tmpdir(), 'catalog-'))
-  cpSync(catalogFolder, folder, { recursive: true })
+  for (const kind of modelKinds) mkdirSync(join(folder, 'models', kind), { recursive: true })
+  for (const file of files) cpSync(join(catalogFolder, file), join(folder, file))
 })
 
 afterEach(() => rmSync(folder, { recursive: true, force: true }))
@@ -32,7 +43,8 @@ function edit(file: string, change: (item: Record<string, unknown>) => void): vo
 describe('loadCatalogFiles', () => {
   it('reads a sound folder, once', () => {
     const catalog = loadCatalogFiles(folder)
-    expect(catalog.models.length).toBeGreaterThan(200)
+    expect(catalog.models.map(({ id }) => id)).toEqual(['fan-120'])
+    expect(catalog.connectorTypes).toHaveLength(2)
     expect(loadCatalogFiles(folder)).toBe(catalog)
   })
 
@@ -56,8 +68,8 @@ describe('loadCatalogFiles', () => {
   })
 
   it('wants a file named after its id', () => {
-    renameSync(join(folder, 'connectors/esata-plug.json'), join(folder, 'connectors/esata.json'))
-    expect(refusal()).toEqual(['connectors/esata.json: id: the file should be esata-plug.json'])
+    renameSync(join(folder, 'connectors/fan-4-header.json'), join(folder, 'connectors/header.json'))
+    expect(refusal()).toEqual(['connectors/header.json: id: the file should be fan-4-header.json'])
   })
 
   it('wants a model in the folder of its kind', () => {
@@ -71,13 +83,14 @@ describe('loadCatalogFiles', () => {
   })
 
   it('refuses a folder whose files parse but do not agree', () => {
-    edit('connectors/esata-plug.json', (item) => (item['matesWith'] = ['sata-host-plug']))
-    const problems = refusal()
-    expect(problems).toContain(
-      'connectorTypes.esata-plug.matesWith: "sata-host-plug" does not name "esata-plug" in return',
+    edit('connectors/fan-4-header.json', (item) => (item['matesWith'] = ['fan-4-header']))
+    expect(refusal()).toContain(
+      'connectorTypes.fan-4-receptacle.matesWith: "fan-4-header" does not name "fan-4-receptacle" in return',
     )
-    expect(problems).toContain(
-      'connectorTypes.esata-receptacle.matesWith: "esata-plug" does not name "esata-receptacle" in return',
-    )
+  })
+
+  it('says so where a folder of models is missing', () => {
+    rmSync(join(folder, 'models/supply'), { recursive: true })
+    expect(refusal()).toEqual(['models/supply: this folder is missing'])
   })
 })
