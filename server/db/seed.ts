@@ -38,7 +38,9 @@ async function seedAccounts(): Promise<void> {
 }
 
 async function seedExample(context: Context, example: ExampleFile): Promise<void> {
+  const fileHash = contentHash(example.document)
   const build = await Build.findOne({ where: { demoExample: example.id } })
+  if (build?.demoFileHash === fileHash) return
   const read = readBuild(example.document, (await context.catalog.current()).index)
   if (!read.ok) {
     context.log.warn({ example: example.id, problems: read.problems.slice(0, 3) }, 'example cannot be read: left out')
@@ -46,6 +48,7 @@ async function seedExample(context: Context, example: ExampleFile): Promise<void
   }
   if (!build) await addDemoBuild(context, example.id, read.document)
   else if (build.demoHash !== contentHash(read.document)) await renewDemoBuild(context, build, read.document)
+  await Build.update({ demoFileHash: fileHash }, { where: { demoExample: example.id } })
 }
 
 async function addDemoBuild(context: Context, exampleId: string, document: BuildDocument): Promise<void> {

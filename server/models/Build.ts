@@ -32,6 +32,8 @@ export class Build extends Model<InferAttributes<Build>, InferCreationAttributes
   declare demoExample: CreationOptional<string | null>
   /** Hash of the document that the demo wrote last: another hash means that somebody edited it. */
   declare demoHash: CreationOptional<string | null>
+  /** Hash of the example as it lies in its file. */
+  declare demoFileHash: CreationOptional<string | null>
 
   static define(database: Sequelize): void {
     Build.init(
@@ -55,6 +57,7 @@ export class Build extends Model<InferAttributes<Build>, InferCreationAttributes
         archivedAt: DataTypes.DATE,
         demoExample: DataTypes.TEXT,
         demoHash: DataTypes.TEXT,
+        demoFileHash: DataTypes.TEXT,
       },
       { sequelize: database, tableName: 'builds' },
     )

@@ -97,7 +97,7 @@ describe('no body makes the server stumble', () => {
       fc.asyncProperty(spoiled({ document, name: 'Spoiled' }), async (body) => {
         holds(await person.send('post', '/api/builds/import', JSON.stringify(body), json))
       }),
-      { numRuns: 150 },
+      { numRuns: 100 },
     )
   })
 
@@ -115,7 +115,7 @@ describe('no body makes the server stumble', () => {
         const fresh = { ...(body as object), requestId: randomUUID() }
         holds(await person.send('post', `/api/builds/${buildId}/revisions`, JSON.stringify(fresh), json))
       }),
-      { numRuns: 150 },
+      { numRuns: 100 },
     )
   })
 })
@@ -131,7 +131,7 @@ test('no address and no query makes the server stumble', async () => {
       const key = encodeURIComponent(name.replace(/\p{Surrogate}/gu, ''))
       holds(await person.get(`${path}?${key}=${encodeURIComponent(value)}&search=${encodeURIComponent(value)}`))
     }),
-    { numRuns: 150 },
+    { numRuns: 100 },
   )
 })
 

@@ -19,8 +19,8 @@ afterAll(() => api.close())
 function problem(response: { status: number; body: unknown; headers: Record<string, string> }) {
   expect(response.headers['content-type']).toBe('application/problem+json; charset=utf-8')
   const read = problemSchema.parse(response.body)
+  expect(read.status).toBe(response.status)
   expect(read).toMatchObject({
-    status: response.status,
     ...problemKinds[read.code],
     type: `urn:bayloom:problem:${read.code}`,
   })

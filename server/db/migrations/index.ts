@@ -2,6 +2,7 @@ import type { Migration } from '../migration.ts'
 import { accounts } from './001-accounts.ts'
 import { builds } from './002-builds.ts'
 import { catalog } from './003-catalog.ts'
+import { demoFiles } from './004-demo-files.ts'
 
 /** Every migration in order. A migration that has shipped is never changed; add the next number. */
-export const migrations: readonly Migration[] = [accounts, builds, catalog]
+export const migrations: readonly Migration[] = [accounts, builds, catalog, demoFiles]
