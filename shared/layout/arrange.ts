@@ -62,6 +62,7 @@ function placePowerLoom(members: readonly LoomNode[], runs: readonly PlacedRun[]
   const deepest = Math.max(0, ...[...depths].map(([node, depth]) => (isLow(node) || isTail(node) ? 0 : depth)))
   for (const node of depths.keys()) if (isTail(node)) depths.set(node, deepest + 1)
   const columns = mirrored(closeRanks(depths))
+  const under = columnsUnder(columns, isLow, strip.width)
 
   const low = members.filter(({ node }) => isLow(node))
   const below = strip.y + strip.height + 48
@@ -78,14 +79,36 @@ function placePowerLoom(members: readonly LoomNode[], runs: readonly PlacedRun[]
     side: 'left',
     edge: strip.x,
     columns,
+    under,
+    ceiling: below,
     links: linksOf(steps, columns, 'left'),
     homes,
     floor,
     gapOf(column) {
-      if (column === 0 && hasTails) return loom.tailGap
+      if (column === under && hasTails) return loom.tailGap
       return column === outermost ? loom.supplyGap : loom.columnGap
     },
   })
+}
+
+/**
+ * How many columns next to the strip hold nothing but what stands below it. Those go on underneath the strip, where
+ * there is room, instead of pushing the loom away from it.
+ */
+function columnsUnder(
+  columns: ReadonlyMap<DrawnNode, number>,
+  isLow: (node: DrawnNode) => boolean,
+  room: number,
+): number {
+  let first = Infinity
+  const widths: number[] = []
+  for (const [node, column] of columns) {
+    if (!isLow(node)) first = Math.min(first, column)
+    widths[column] = Math.max(widths[column] ?? 0, node.width)
+  }
+  if (first === Infinity) return 0
+  const wide = widths.slice(0, first).reduce((sum, width) => sum + width + loom.columnGap, -loom.columnGap)
+  return wide <= room + loom.columnGap - loom.nodeGap ? first : 0
 }
 
 /** Heights below the strip, one after the other; what hangs on one of them stands level with it. */
@@ -141,6 +164,8 @@ function placeDataLoom(members: readonly LoomNode[], runs: readonly PlacedRun[],
     side: 'right',
     edge: strip.x + strip.width,
     columns,
+    under: 0,
+    ceiling: -Infinity,
     links: linksOf(steps, columns, 'right'),
     homes: new Map(),
     floor: strip.y + strip.height - tag.compactHeight / 2,
@@ -166,7 +191,7 @@ function mirrored(ranks: ReadonlyMap<DrawnNode, number>): Map<DrawnNode, number>
 }
 
 /** A card stands at its slot's height, whatever else the board is joined to. */
-const slotWeight = 20
+const slotWeight = 1000
 
 /** Runs that lie within one loom and lead away from the strip, column by column. */
 function linksOf(runs: readonly PlacedRun[], columns: ReadonlyMap<DrawnNode, number>, side: 'left' | 'right'): Link[] {
@@ -176,7 +201,8 @@ function linksOf(runs: readonly PlacedRun[], columns: ReadonlyMap<DrawnNode, num
     const column = columns.get(far.node)
     const isFrame = near.node.kind !== 'part' && near.node.kind !== 'stub'
     if (column === undefined || !(isFrame || columns.has(near.node))) continue
-    if ((columns.get(near.node) ?? -1) < column) links.push({ run, near, far, weight: inSlot ? slotWeight : 1 })
+    if ((columns.get(near.node) ?? -1) < column)
+      links.push({ run, near, far, weight: inSlot && !isFrame ? slotWeight : 1 })
   }
   return links
 }

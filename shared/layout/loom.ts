@@ -18,6 +18,9 @@ export interface LoomPlan {
   edge: number
   /** Columns of the nodes, counted from the strip. */
   columns: ReadonlyMap<DrawnNode, number>
+  /** So many of the first columns stand underneath the strip, not beside it, below `ceiling`. */
+  under: number
+  ceiling: number
   links: readonly Link[]
   /** Heights for nodes that stand below the rest whatever feeds them, as fans and the board's inlets. */
   homes: ReadonlyMap<DrawnNode, number>
@@ -57,7 +60,7 @@ export function placeLoom(plan: LoomPlan): void {
   const edges = columnEdges(plan, widths)
 
   const nearLinks = groupBy(links, (link) => link.far.node)
-  const lanes = lanesOf(links, columns)
+  const lanes = lanesOf(plan)
   const laneOf = new Map(lanes.map((lane) => [lane.link, lane]))
   const pulls = pullsOf(plan, nearLinks)
 
@@ -73,7 +76,7 @@ export function placeLoom(plan: LoomPlan): void {
       entries.push(nodeEntry(node, order.get(node) ?? 0, nearLinks.get(node) ?? [], laneOf, pulls, column))
     for (const lane of lanesIn.get(column) ?? []) entries.push(laneEntry(lane, order.get(lane.link.far.node) ?? 0))
     entries.sort((a, b) => a.key - b.key || a.order - b.order)
-    stack(entries)
+    stack(entries, column < plan.under ? plan.ceiling : -Infinity)
     for (const node of nodesIn.get(column) ?? [])
       node.x = plan.side === 'left' ? (edges[column] ?? 0) - node.width : (edges[column] ?? 0)
   }
@@ -81,22 +84,24 @@ export function placeLoom(plan: LoomPlan): void {
 }
 
 /** The edge of each column that faces the strip. */
-function columnEdges({ side, edge, gapOf }: LoomPlan, widths: readonly number[]): number[] {
+function columnEdges({ side, edge, gapOf, under }: LoomPlan, widths: readonly number[]): number[] {
   const sign = side === 'left' ? -1 : 1
+  const gap = (column: number) => (column === 0 && under > 0 ? 0 : gapOf(column))
   let x = edge
+  for (let column = 0; column < under; column++) x -= sign * (gap(column) + (widths[column] ?? 0))
   return widths.map((width, column) => {
-    const own = x + sign * gapOf(column)
+    const own = x + sign * gap(column)
     x = own + sign * width
     return own
   })
 }
 
 /** Room for runs that pass columns. */
-function lanesOf(links: readonly Link[], columns: ReadonlyMap<DrawnNode, number>): Lane[] {
+function lanesOf({ links, columns, under }: LoomPlan): Lane[] {
   const lanes: Lane[] = []
   let total = 0
   for (const link of links) {
-    const first = (columns.get(link.near.node) ?? -1) + 1
+    const first = (columns.get(link.near.node) ?? under - 1) + 1
     const passed = (columns.get(link.far.node) ?? 0) - first
     if (passed <= 0) continue
     total += passed
@@ -141,13 +146,13 @@ function laneEntry(lane: Lane, order: number): Entry {
   return { lane, key: height, order, stacked: { wish: height, height: 0, weight: 2 } }
 }
 
-function stack(entries: readonly Entry[]): void {
+function stack(entries: readonly Entry[], ceiling: number): void {
   const gap = (above: number, below: number): number => gapBetween(entries[above], entries[below])
   const tops = separate(
     entries.map((entry) => entry.stacked),
     gap,
   )
-  let least = -Infinity
+  let least = ceiling
   entries.forEach((entry, i) => {
     const wish = tops[i] ?? 0
     if (entry.node) entry.node.y = wish < least ? snapUp(least) : Math.max(snap(wish), snapUp(least))

@@ -49,8 +49,8 @@ export function openEnd(x: number, y: number, words: string, side: 'left' | 'rig
       stroke: palette.danger,
       'stroke-width': 1.5,
     }),
-    text(x + way * 19, y + 4, words, {
-      size: 11.5,
+    text(x + way * 17, y + 4, words, {
+      size: 11,
       weight: 600,
       fill: palette.danger,
       anchor: side === 'left' ? 'end' : 'start',

@@ -23,7 +23,7 @@ export function withinLimits({ counts }: CheckResult): { words: string; isWithin
   return { words: counts.caution > 0 ? `yes, ${counted(counts.caution, 'caution')}` : 'yes', isWithin: true }
 }
 
-const width = 480
+const width = 560
 const rowHeight = 52
 
 /** Identity of the sheet, as on any technical drawing. */
@@ -31,17 +31,17 @@ export function titleBlock(identity: Identity, result: CheckResult): Block {
   const limits = withinLimits(result)
   const machine = identity.machine ? `${identity.name} (${identity.machine})` : identity.name
   const fields = [
-    { label: 'Machine', value: machine, x: 0, row: 0, width: 288 },
-    { label: 'Revision', value: identity.revision, x: 288, row: 0, width: 80 },
-    { label: 'Date', value: identity.date, x: 368, row: 0, width: 112 },
+    { label: 'Machine', value: machine, x: 0, row: 0, width: 344 },
+    { label: 'Revision', value: identity.revision, x: 344, row: 0, width: 104 },
+    { label: 'Date', value: identity.date, x: 448, row: 0, width: 112 },
     { label: 'Shown', value: `wiring, ${identity.moment.toLowerCase()}`, x: 0, row: 1, width: 168 },
-    { label: 'Checked', value: identity.checked, x: 168, row: 1, width: 120 },
+    { label: 'Checked', value: identity.checked, x: 168, row: 1, width: 176 },
     {
       label: 'Within the stated limits',
       value: limits.words,
-      x: 288,
+      x: 344,
       row: 1,
-      width: 192,
+      width: 216,
       fill: limits.isWithin ? palette.accent : palette.danger,
     },
   ]
