@@ -16,9 +16,9 @@ const reasons: Readonly<Record<string, string>> = {
 }
 
 /** Reads a file, or the standard input for "-", as text. Never throws. */
-export async function readInput(file: string): Promise<Input> {
+export async function readInput(file: string, standardInput: AsyncIterable<Buffer>): Promise<Input> {
   try {
-    const bytes = file === '-' ? await gather(process.stdin) : await readFile(file)
+    const bytes = file === '-' ? await gather(standardInput) : await readFile(file)
     if (bytes === null) return { ok: false, reason: `larger than ${most_B / 1024 / 1024} MB` }
     return { ok: true, text: new TextDecoder('utf-8', { fatal: true }).decode(bytes) }
   } catch (error) {

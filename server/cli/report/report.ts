@@ -17,7 +17,7 @@ export function report(result: CheckResult, options: LedgerOptions): string {
     momentLines(result, width),
     ...scanLines(result, width),
   ]
-  return printable(`${sections.filter((section) => section !== '').join('\n\n')}\n`)
+  return printable(sections.filter((section) => section !== '').join('\n\n'))
 }
 
 function heading({ build }: CheckResult): string {
