@@ -1,5 +1,6 @@
 import { watch } from 'node:fs'
 import { join } from 'node:path'
+import { bundleServer } from './bundle.mjs'
 import { openDatabase } from './database.mjs'
 import { loadEnvironment } from './environment.mjs'
 import { lockHolder, tryLock } from './lock.mjs'
@@ -25,16 +26,21 @@ const watchSources = (onChange) => {
     })
 }
 
-/** The server, started anew on every change of its sources. @param {Record<string, string>} env */
-const restartingServer = (env) => {
-  let server = spawnServer({ env })
+/**
+ * The server, started anew on every change of its sources. Where they cannot be built just then, the one that runs stays.
+ * @param {Record<string, string>} env
+ */
+const restartingServer = async (env) => {
+  let server = await spawnServer({ env })
   let last = Promise.resolve()
+  const restart = async () => {
+    await bundleServer()
+    await server.stop()
+    server = await spawnServer({ env })
+    tell('server', 'started anew')
+  }
   watchSources(() => {
-    last = last.then(async () => {
-      await server.stop()
-      tell('server', 'started anew')
-      server = spawnServer({ env })
-    })
+    last = last.then(restart).catch((error) => console.error(error instanceof Refusal ? error.message : error))
   })
   return { first: server, stop: () => server.stop() }
 }
@@ -59,7 +65,7 @@ await main(
     const url = `http://127.0.0.1:${port}`
     const apiPort = await anyFreePort()
     const api = `http://127.0.0.1:${apiPort}`
-    const server = restartingServer({
+    const server = await restartingServer({
       DATABASE_URL: database.url,
       HOST: '127.0.0.1',
       PORT: String(apiPort),

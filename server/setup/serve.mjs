@@ -3,6 +3,7 @@ import { closeSync, existsSync, openSync, readFileSync, renameSync, statSync } f
 import { join } from 'node:path'
 import { pathToFileURL } from 'node:url'
 import { setTimeout as pause } from 'node:timers/promises'
+import { bundleServer } from './bundle.mjs'
 import { root } from './paths.mjs'
 import { Refusal } from './refusal.mjs'
 import { tail } from './run.mjs'
@@ -19,9 +20,10 @@ const openLog = (file) => {
  * Starts the server as a process of its own that ends with this one. What it says goes to the log, else to this terminal.
  * @param {{ env: Record<string, string>, log?: string }} options
  */
-export const spawnServer = ({ env, log }) => {
+export const spawnServer = async ({ env, log }) => {
+  const server = await bundleServer()
   const output = log === undefined ? 'inherit' : openLog(log)
-  const child = spawn(process.execPath, ['--import', 'tsx', '--import', guard, join('server', 'index.ts')], {
+  const child = spawn(process.execPath, ['--enable-source-maps', '--import', guard, server], {
     cwd: root,
     env: { ...process.env, ...env },
     stdio: ['ignore', output, output, 'ipc'],

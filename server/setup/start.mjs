@@ -82,7 +82,7 @@ await main(
     const log = join(dataFolder, 'server.log')
     const server = await step('server', async (say) => {
       say('migrating the database, loading catalog and demo where they are not there yet')
-      const started = spawnServer({
+      const started = await spawnServer({
         env: { DATABASE_URL: database.url, HOST: host, PORT: String(port), BAYLOOM_PREPARE: '1' },
         log,
       })

@@ -42,7 +42,7 @@ export async function startProduct(
     ...options.settings,
   }
   const launch = async () => {
-    const started = spawnServer({ env, log })
+    const started = await spawnServer({ env, log })
     await waitUntilReady(url, started, log)
     return started
   }
