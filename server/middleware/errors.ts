@@ -2,6 +2,17 @@ import type { ErrorRequestHandler, Response } from 'express'
 import type { Logger } from 'pino'
 import { translateDatabaseError } from '../db/translateError.ts'
 import { Refusal, toProblem } from '../services/refusal.ts'
+import { withoutTokens } from './logRequests.ts'
+
+/** Refusals that may be somebody trying what they should not. */
+const notedRefusals: ReadonlySet<string> = new Set([
+  'wrong-credentials',
+  'forbidden',
+  'forged-request',
+  'too-many-requests',
+])
+
+const userOf = (response: Response): unknown => (response.locals as { user?: unknown }).user ?? null
 
 /** Every error becomes problem details (RFC 9457). What is not a refusal is logged and told as nothing but that. */
 export function errorHandler(log: Logger): ErrorRequestHandler {
@@ -9,6 +20,17 @@ export function errorHandler(log: Logger): ErrorRequestHandler {
     const refusal = toRefusal(error)
     if (refusal.code === 'internal' || refusal.code === 'unavailable')
       log.error({ err: error, method: request.method, path: request.path }, refusal.message)
+    if (notedRefusals.has(refusal.code))
+      log.warn(
+        {
+          code: refusal.code,
+          method: request.method,
+          path: withoutTokens(request.path),
+          address: request.ip,
+          user: userOf(response),
+        },
+        'refused',
+      )
     if (response.headersSent) {
       response.destroy()
       return

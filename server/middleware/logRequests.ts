@@ -6,7 +6,7 @@ import { pinoHttp } from 'pino-http'
 export function logRequests(log: Logger): RequestHandler {
   return pinoHttp({
     logger: log,
-    customLogLevel: (_request, response) => (response.statusCode >= 500 ? 'error' : 'info'),
+    customLogLevel: (_request, response) => (response.statusCode >= 500 ? 'error' : 'debug'),
     serializers: {
       req: (request: { method: string; url: string }) => ({ method: request.method, url: withoutTokens(request.url) }),
       res: (response: { statusCode: number }) => ({ status: response.statusCode }),
@@ -14,5 +14,6 @@ export function logRequests(log: Logger): RequestHandler {
   }) as RequestHandler
 }
 
-const withoutTokens = (url: string): string =>
+/** A path as it may be logged. */
+export const withoutTokens = (url: string): string =>
   url.replace(/\/(invitations|password-resets)\/[^/?]{20,}/g, '/$1/…').replace(/\?.*/, '')

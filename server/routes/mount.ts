@@ -35,6 +35,7 @@ async function handle(
 ): Promise<void> {
   const signedIn = await identify(context, request, response)
   const actor = signedIn?.user ?? null
+  response.locals['user'] = actor?.id
   if (may(actor, route.policy) === 'sign-in') throw new Refusal('not-signed-in')
   if (route.method !== 'get') refuseForged(context, request, signedIn)
 

@@ -61,6 +61,7 @@ export async function changePassword(
     await voidResetLinks(user.id, transaction)
     await endSessionsOf(user.id, 'password changed', transaction, signedIn.sessionId)
   })
+  context.log.info({ user: user.id }, 'password changed')
 }
 
 /** Sets a new password through a link. The link works once; every session ends. */
@@ -77,6 +78,7 @@ export async function resetPassword(context: Context, token: string, password: s
     await user.update({ passwordHash }, { transaction })
     await endSessionsOf(user.id, 'password reset', transaction)
   })
+  context.log.info({ user: user.id }, 'password reset')
 }
 
 const isOpen = (reset: PasswordReset): boolean => reset.usedAt === null && reset.expiresAt.getTime() > Date.now()

@@ -52,6 +52,7 @@ export async function openSession(context: Context, user: User, transaction: Tra
     { transaction },
   )
   await user.update({ lastSeenAt: new Date(now) }, { transaction })
+  context.log.info({ user: user.id, session: session.id }, 'signed in')
   const refreshToken = await addRefreshToken(session.id, transaction)
   return issue(context, { sessionId: session.id, user: toUserView(user) }, refreshToken)
 }

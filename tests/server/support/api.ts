@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import { createServer } from 'node:http'
 import type { AddressInfo } from 'node:net'
-import { pino } from 'pino'
+import { pino, type Logger } from 'pino'
 import supertest, { type Response } from 'supertest'
 import type { InstallationRole } from '#shared/contract/session.ts'
 import { createApp } from '../../../server/app.ts'
@@ -48,7 +48,7 @@ let passwordHash: Promise<string> | undefined
 
 /** The whole API on a database of its own. Jobs run only when a test drains them. */
 export async function startApi(
-  options: { settings?: Record<string, string>; transport?: MailTransport } = {},
+  options: { settings?: Record<string, string>; transport?: MailTransport; log?: Logger } = {},
 ): Promise<Api> {
   const database = await freshDatabase()
   const config = readConfig({
@@ -58,7 +58,7 @@ export async function startApi(
     PORT: '0',
     ...options.settings,
   })
-  const context = makeContext(config, pino({ level: config.logLevel }), options.transport)
+  const context = makeContext(config, options.log ?? pino({ level: config.logLevel }), options.transport)
   await context.loadSecrets()
   const server = createServer(createApp(context))
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve))
