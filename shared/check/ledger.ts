@@ -69,22 +69,27 @@ export function ledgerRows(build: ResolvedBuild, power: PowerResult): LedgerRow[
   return rows
 }
 
-function row(head: RowHead, moment: MomentId, load: number, limit: number | null): LedgerRow {
-  const volts = head.unit === 'V'
-  return {
-    subject: head.subject,
-    kind: head.kind,
-    name: head.name,
-    ...(head.rail === undefined ? {} : { rail: head.rail }),
+function row(
+  { subject, kind, name, rail, unit, about }: RowHead,
+  moment: MomentId,
+  load: number,
+  limit: number | null,
+) {
+  const made: LedgerRow = {
+    subject,
+    kind,
+    name,
     moment,
     load,
     limit,
-    unit: head.unit,
-    margin: limit === null ? null : volts ? load - limit : limit - load,
+    unit,
+    margin: limit === null ? null : unit === 'V' ? load - limit : limit - load,
     share: limit === null || limit === 0 ? null : load / limit,
     shortTime: isStart(moment),
-    about: head.about,
+    about,
   }
+  if (rail !== undefined) made.rail = rail
+  return made
 }
 
 const contactHead = (contact: ContactLoad): RowHead => ({

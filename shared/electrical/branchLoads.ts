@@ -1,6 +1,7 @@
-import { branchCurrents, branchRange, islandOf, type SolvedLine } from './branchValues.ts'
+import { branchCurrents, branchRange, islandOf } from './branchValues.ts'
 import type { Islands } from './islands.ts'
 import type { LineNetwork } from './network.ts'
+import type { SolvedLine } from './solveLines.ts'
 import type { ConductorLoad, ContactLoad, PowerResult } from './result.ts'
 
 /** What every contact and conductor carries. */
@@ -55,7 +56,6 @@ export function branchLoads(
         limitLow_A: rating ? rating.low * count : null,
         weaker: joint[weaker === 'alike' ? fedSide(network, i) : weaker],
         rating: rating?.figure ?? null,
-        drop_V: current_A.map((current) => current * resistance_ohm),
         about: about || (rating?.about ?? false),
       }
       own[i] = load

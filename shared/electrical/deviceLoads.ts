@@ -1,105 +1,105 @@
 import { momentIds } from '../check/result.ts'
 import { nominal_V } from '../quantity/rails.ts'
 import type { Draw } from './attach.ts'
-import type { SolvedLine } from './branchValues.ts'
+import { nothing } from './branchValues.ts'
 import { courseOf, type Course } from './courses.ts'
 import { states, type RailCurrents, type State } from './deviceCurrents.ts'
 import type { Island, Islands } from './islands.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import { pathToSource } from './pathToSource.ts'
 import type { DeviceLoad } from './result.ts'
+import type { Solution } from './solve/solve.ts'
+import type { SolvedLine } from './solveLines.ts'
 import type { StartPlan } from './startPlan.ts'
 
 /** What every device takes and sees, at the worst step of each moment. */
 export function deviceLoads(
   draws: readonly Draw[],
-  fresh: readonly SolvedLine[],
-  aged: readonly SolvedLine[],
+  solved: readonly SolvedLine[],
   islands: Islands,
   plan: StartPlan,
 ): DeviceLoad[] {
   return draws.map((draw) => {
     const { part, connector, rail, currents, share, flows } = draw
     const busiest = momentIds.map((moment) => busiestState(courseOf(moment, part, currents, plan), currents))
-    const supplied = fresh[lineIndex[rail]]!
-    const load: DeviceLoad = {
+    const supplied = solved[lineIndex[rail]]!
+    const island = islands.all[islands.of[connector.index]!]
+    return {
       part,
       connector,
       rail,
-      current_A: Float64Array.from(busiest, (state) => (flows ? currents.inState[state].value * share : 0)),
+      current_A: busiest.map((state) => (flows ? currents.inState[state].value * share : 0)),
       share,
-      fedBy: flows
-        ? supplied.network.sourcesOf(connector.index).map((source) => ({ part: source.part, rail: source.rail! }))
-        : [],
-      voltage_V: new Float64Array(momentIds.length),
-      aged_V: new Float64Array(momentIds.length),
-      atHigh_V: new Float64Array(momentIds.length),
-      drop_V: {
-        wire: new Float64Array(momentIds.length),
-        contact: new Float64Array(momentIds.length),
-        return: new Float64Array(momentIds.length),
-      },
+      fedBy: flows ? sourcesOf(supplied, connector.index) : [],
+      ...(flows && island ? voltages(draw, supplied, solved[returnIndex]!, island) : unfed),
       figures: Object.fromEntries(momentIds.map((moment, m) => [moment, currents.inState[busiest[m]!].figure])),
       about: states.some((state) => currents.inState[state].about),
     }
-    const island = islands.all[islands.of[connector.index]!]
-    if (flows && island) fillVoltages(load, supplied, fresh[returnIndex]!, aged, island, draw)
-    return load
   })
 }
+
+const unfed = {
+  voltage_V: nothing,
+  aged_V: nothing,
+  atHigh_V: nothing,
+  drop_V: { wire: nothing, contact: nothing, return: nothing },
+}
+
+const sourcesOf = ({ network }: SolvedLine, node: number): DeviceLoad['fedBy'] =>
+  network.sourcesOf(node).map(({ part, rail }) => ({ part, rail: rail! }))
 
 /** The state of a course in which the device takes most. */
 const busiestState = (course: Course, { inState }: RailCurrents): State =>
   course.reduce((most, { state }) => (inState[state].value > inState[most].value ? state : most), course[0]!.state)
 
-function fillVoltages(
-  load: DeviceLoad,
+/** Voltages of a device at the step of each moment at which it sees least, and where the drop comes from. */
+function voltages(
+  { connector, rail }: Draw,
   supplied: SolvedLine,
   returned: SolvedLine,
-  aged: readonly SolvedLine[],
-  { first, cases }: Island,
-  { connector, rail }: Draw,
-): void {
+  { first }: Island,
+): Pick<DeviceLoad, 'voltage_V' | 'aged_V' | 'atHigh_V' | 'drop_V'> {
   const node = connector.index
   const at = supplied.columns.node[node]!
   const atReturn = returned.columns.node[node]!
-  const agedRail = aged[lineIndex[rail]]!.solution.voltage_V
-  const agedReturn = aged[returnIndex]!.solution.voltage_V
-  const seen = (rails: Float64Array, returns: Float64Array, column: number) =>
-    nominal_V[rail] + rails[at + column]! + returns[atReturn + column]!
-
-  for (let m = 0; m < momentIds.length; m++) {
-    let worst = first[m]!
-    let lowest = Infinity
-    let lowestAged = Infinity
-    let lowestAtHigh = Infinity
-    for (let column = first[m]!; column < first[m + 1]!; column++) {
-      const volts = seen(supplied.solution.voltage_V, returned.solution.voltage_V, column)
-      if (volts < lowest) {
-        lowest = volts
-        worst = column
-      }
-      lowestAged = Math.min(lowestAged, seen(agedRail, agedReturn, column))
-      const high = seen(supplied.solution.voltage_V, returned.solution.voltage_V, column + 2 * cases)
-      lowestAtHigh = Math.min(lowestAtHigh, high)
+  // The return is solved as if it, too, were drawn from: its rise is the negative of what comes out.
+  const lowest = (onRail: Solution, onReturn: Solution, m: number) => {
+    let least = Infinity
+    let column = first[m]!
+    for (let each = column; each < first[m + 1]!; each++) {
+      const volts = onRail.voltage_V[at + each]! + onReturn.voltage_V[atReturn + each]!
+      if (volts >= least) continue
+      least = volts
+      column = each
     }
-    load.voltage_V[m] = lowest
-    load.aged_V[m] = lowestAged
-    load.atHigh_V[m] = lowestAtHigh
-    const path = pathToSource(supplied.network, supplied.columns, supplied.solution, node, worst)
-    splitDrop(load, m, supplied, path, worst)
-    load.drop_V.return[m] = -returned.solution.voltage_V[atReturn + worst]! || 0
+    return { volts: nominal_V[rail] + least, column }
   }
+  const found = {
+    voltage_V: [] as number[],
+    aged_V: [] as number[],
+    atHigh_V: [] as number[],
+    drop_V: { wire: [] as number[], contact: [] as number[], return: [] as number[] },
+  }
+  for (let m = 0; m < momentIds.length; m++) {
+    const { volts, column } = lowest(supplied.stated, returned.stated, m)
+    found.voltage_V.push(volts)
+    found.aged_V.push(lowest(supplied.aged, returned.aged, m).volts)
+    found.atHigh_V.push(lowest(supplied.high, returned.high, m).volts)
+    const { wire, contact } = dropOnTheWay(supplied, node, column)
+    found.drop_V.wire.push(wire)
+    found.drop_V.contact.push(contact)
+    found.drop_V.return.push(0 - returned.stated.voltage_V[atReturn + column]!)
+  }
+  return found
 }
 
 /** Shares the rail's drop between wires and contacts along the path of the current. */
-function splitDrop(load: DeviceLoad, m: number, supplied: SolvedLine, path: readonly number[], column: number): void {
-  const { network, columns, solution } = supplied
-  for (const branch of path) {
+function dropOnTheWay({ network, columns, stated }: SolvedLine, node: number, column: number) {
+  const drop = { wire: 0, contact: 0 }
+  for (const branch of pathToSource(network, columns, stated, node, column)) {
     const { kind } = network.branches[branch]!
     if (kind === 'feed') continue
-    const drop = Math.abs(solution.current_A[columns.branch[branch]! + column]!) * network.new_ohm[branch]!
-    if (kind === 'wire') load.drop_V.wire[m]! += drop
-    else load.drop_V.contact[m]! += drop
+    drop[kind] += Math.abs(stated.current_A[columns.branch[branch]! + column]!) * network.new_ohm[branch]!
   }
+  return drop
 }

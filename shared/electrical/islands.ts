@@ -1,12 +1,11 @@
 import { momentIds, type MomentId } from '../check/result.ts'
-import { courseOf, type Course } from './courses.ts'
+import { courseOf } from './courses.ts'
 import type { Draw } from './attach.ts'
+import { lineIndex, returnIndex } from './lines.ts'
 import type { PowerNetwork } from './network.ts'
 import { Clusters } from './solve/plan.ts'
+import type { Columns } from './solve/solve.ts'
 import type { StartPlan } from './startPlan.ts'
-
-/** Low, stated and high end of every load: what a result could be if the figures are off. */
-export const scenarios = ['stated', 'low', 'high'] as const
 
 /**
  * A piece of the network that hangs together without passing through a supply: a lead and all it feeds. Pieces do
@@ -19,7 +18,7 @@ export interface Island {
   times: readonly Float64Array[]
   /** For each moment its first column; one more at the end. */
   first: Int32Array
-  /** Columns of one scenario. All scenarios stand one after the other. */
+  /** All columns. */
   cases: number
 }
 
@@ -78,45 +77,34 @@ function changes(moment: MomentId, draws: readonly Draw[], plan: StartPlan): Flo
   return Float64Array.from(seen).sort()
 }
 
-/** Adds what each draw takes to the columns of its island, at its own connector. */
+/** Which end of every figure is taken: as stated, or its range's low or high end. */
+export type Scenario = 'value' | 'low' | 'high'
+
+/** Adds what each draw takes to the columns of its island at its own connector: on its rail, and on the return. */
 export function fillDraws(
   islands: Islands,
   plan: StartPlan,
-  columnAt: Int32Array,
-  onRail: (draw: Draw) => Float64Array,
-  onReturn: Float64Array,
+  columns: readonly Columns[],
+  drawn: readonly Float64Array[],
+  scenario: Scenario,
 ): void {
-  for (const island of islands.all)
-    for (const draw of island.draws) {
-      const at = columnAt[draw.connector.index]!
-      const supplied = onRail(draw)
-      momentIds.forEach((moment, m) => {
-        const course = courseOf(moment, draw.part, draw.currents, plan)
-        fillMoment(island, m, course, draw, at, supplied, onReturn)
-      })
+  const onReturn = drawn[returnIndex]!
+  for (const { draws, first, times } of islands.all)
+    for (const { part, connector, rail, currents, share } of draws) {
+      const line = lineIndex[rail]
+      const onRail = drawn[line]!
+      const railAt = columns[line]!.node[connector.index]!
+      const returnAt = columns[returnIndex]!.node[connector.index]!
+      for (const [m, moment] of momentIds.entries()) {
+        const course = courseOf(moment, part, currents, plan)
+        const steps = times[m]!
+        let segment = 0
+        for (let step = 0; step < steps.length; step++) {
+          while (segment + 1 < course.length && course[segment + 1]!.from <= steps[step]!) segment++
+          const ampere = currents.inState[course[segment]!.state][scenario] * share
+          onRail[railAt + first[m]! + step]! += ampere
+          onReturn[returnAt + first[m]! + step]! += ampere
+        }
+      }
     }
-}
-
-function fillMoment(
-  { first, times, cases }: Island,
-  moment: number,
-  course: Course,
-  { currents, share }: Draw,
-  at: number,
-  supplied: Float64Array,
-  onReturn: Float64Array,
-): void {
-  const steps = times[moment]!
-  let segment = 0
-  for (let step = 0; step < steps.length; step++) {
-    while (segment + 1 < course.length && course[segment + 1]!.from <= steps[step]!) segment++
-    const { value, low, high } = currents.inState[course[segment]!.state]
-    const column = at + first[moment]! + step
-    supplied[column]! += value * share
-    supplied[column + cases]! += low * share
-    supplied[column + 2 * cases]! += high * share
-    onReturn[column]! += value * share
-    onReturn[column + cases]! += low * share
-    onReturn[column + 2 * cases]! += high * share
-  }
 }

@@ -1,8 +1,8 @@
 import type { ResolvedPart } from '../build/resolve.ts'
 import type { Draw } from './attach.ts'
-import type { SolvedLine } from './branchValues.ts'
 import type { Branch, Source } from './network.ts'
 import type { NetworkProblem } from './result.ts'
+import type { SolvedLine } from './solveLines.ts'
 
 /** What the network cannot be: rails tied together, loops without resistance, loads without a return. */
 export function networkProblems(solved: readonly SolvedLine[], draws: readonly Draw[]): NetworkProblem[] {
@@ -27,8 +27,8 @@ function joinedSources({ network }: SolvedLine): NetworkProblem[] {
   })
 }
 
-function bareLoops({ network, solution }: SolvedLine): NetworkProblem[] {
-  return solution.loops.map((loop) => ({
+function bareLoops({ network, stated }: SolvedLine): NetworkProblem[] {
+  return stated.loops.map((loop) => ({
     kind: 'indeterminate-loop',
     line: network.line,
     parts: partsOf(loop.map((branch) => network.branches[branch]!)),

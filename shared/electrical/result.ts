@@ -6,8 +6,8 @@ import type { Draw } from './attach.ts'
 import type { PowerNetwork } from './network.ts'
 import type { StartPlan } from './startPlan.ts'
 
-/** One value a moment, in the order of `momentIds`. Moments that do not apply hold NaN-free zeros and are not judged. */
-export type PerMoment = Float64Array
+/** One value a moment, in the order of `momentIds`. Moments that do not apply are computed too, and not judged. */
+export type PerMoment = readonly number[]
 
 /** What a load or limit may be when every figure behind it lies at its low or its high end. */
 export interface LoadRange {
@@ -36,7 +36,6 @@ export interface ContactLoad {
   /** Side whose rating is lower; where both are alike, the side that is fed. */
   weaker: ResolvedConnector
   rating: Figure | null
-  drop_V: PerMoment
   about: boolean
 }
 

@@ -2,9 +2,10 @@ import type { ResolvedPart } from '../build/resolve.ts'
 import type { SupplyRail } from '../catalog/model.ts'
 import { momentIds } from '../check/result.ts'
 import { nominal_V } from '../quantity/rails.ts'
-import { islandOf, type SolvedLine } from './branchValues.ts'
-import { type Island, type Islands, scenarios } from './islands.ts'
+import { islandOf } from './branchValues.ts'
+import type { Island, Islands } from './islands.ts'
 import type { StageStep, SupplyGroupLoad, SupplyRailLoad, SupplyTotalLoad } from './result.ts'
+import type { SolvedLine } from './solveLines.ts'
 import type { StartPlan } from './startPlan.ts'
 
 export interface SupplyLoads {
@@ -14,16 +15,47 @@ export interface SupplyLoads {
   timeline: StageStep[]
 }
 
-/** An output of a supply into one island, as a row of solved currents. */
-interface Outlet {
-  rail: number
-  /** First column of the feeding branch. */
-  at: number
-  current_A: Float64Array
+/** One rail of one supply, and whether what it delivers rests on an unknown or guessed figure. */
+interface Output {
+  part: ResolvedPart
+  rail: SupplyRail
+  about: boolean
 }
 
-const perMoment = () => new Float64Array(momentIds.length)
-const range = () => ({ low: perMoment(), high: perMoment() })
+/** An output of a supply into one island: where its current stands among the solved ones. */
+interface Outlet {
+  output: number
+  /** First column of the feeding branch. */
+  at: number
+  line: SolvedLine
+}
+
+type Scenario = 'stated' | 'low' | 'high'
+const scenarios: readonly Scenario[] = ['stated', 'low', 'high']
+
+/** Keeps the largest weighted sum of some outputs over the steps of each moment. */
+class Meter {
+  readonly largest: Record<Scenario, number[]> = { stated: zeros(), low: zeros(), high: zeros() }
+  readonly #outputs: readonly number[]
+  readonly #weights: readonly number[]
+
+  constructor(outputs: readonly number[], weights: readonly number[]) {
+    this.#outputs = outputs
+    this.#weights = weights
+  }
+
+  read(now_A: Float64Array, moment: number, scenario: Scenario): void {
+    const sum = this.#outputs.reduce((total, output, i) => total + now_A[output]! * this.#weights[i]!, 0)
+    const kept = this.largest[scenario]
+    if (sum > kept[moment]!) kept[moment] = sum
+  }
+
+  get range() {
+    return { low: this.largest.low, high: this.largest.high }
+  }
+}
+
+const zeros = (): number[] => momentIds.map(() => 0)
 
 /**
  * Adds up what each supply rail, group and supply delivers: at each step of a moment the sum over all islands, and
@@ -35,110 +67,84 @@ export function addUpSupplies(
   islands: Islands,
   plan: StartPlan,
 ): SupplyLoads {
-  const rails = supplies.flatMap((part) =>
-    part.model.supply!.rails.map((rail): SupplyRailLoad => ({
-      part,
-      rail,
-      current_A: perMoment(),
-      range_A: range(),
-      about: false,
-    })),
+  const outputs = supplies.flatMap((part) =>
+    part.model.supply!.rails.map((rail): Output => ({ part, rail, about: false })),
   )
-  const railIndex = new Map<ResolvedPart, Map<SupplyRail, number>>()
-  rails.forEach(({ part, rail }, i) => {
-    const own = railIndex.get(part) ?? new Map<SupplyRail, number>()
-    railIndex.set(part, own.set(rail, i))
-  })
-  const groups = supplies.flatMap((part) => groupsOf(part, railIndex.get(part)!))
-  const totals = supplies.map((part): Total => {
-    const load: SupplyTotalLoad = { part, load_W: perMoment(), range_W: range(), about: false }
-    return { load, members: [...railIndex.get(part)!.values()] }
-  })
-  const outlets = outletsOf(solved, islands, railIndex, rails)
-  for (const { load, members } of [...groups, ...totals]) load.about = members.some((i) => rails[i]!.about)
+  const outlets = outletsOf(solved, islands, outputs)
+  const volts = outputs.map(({ rail }) => rail.setPoint_V.value ?? nominal_V[rail.rail])
+  const meters: Meter[] = []
+  const meter = (members: readonly number[], weigh: (output: number) => number): Meter => {
+    const made = new Meter(members, members.map(weigh))
+    meters.push(made)
+    return made
+  }
+  const outputsOf = (part: ResolvedPart, wanted: (rail: SupplyRail) => boolean): number[] =>
+    outputs.flatMap((output, i) => (output.part === part && wanted(output.rail) ? [i] : []))
+  const isAbout = (members: readonly number[]) => members.some((i) => outputs[i]!.about)
 
-  const volts = rails.map(({ rail }) => rail.setPoint_V.value ?? nominal_V[rail.rail])
-  const weighted = (members: readonly number[], now: Float64Array, by: readonly number[] | null) =>
-    members.reduce((sum, i) => sum + now[i]! * (by ? by[i]! : 1), 0)
+  const rails = outputs.map(({ part, rail, about }, i): SupplyRailLoad => {
+    const own = meter([i], () => 1)
+    return { part, rail, current_A: own.largest.stated, range_A: own.range, about }
+  })
+  const groups = supplies.flatMap((part) =>
+    part.model.supply!.groups.flatMap((group) => {
+      const members = outputsOf(part, ({ id }) => group.rails.includes(id))
+      const inUnit = (unit: 'W' | 'A'): SupplyGroupLoad => {
+        const own = meter(members, (i) => (unit === 'W' ? volts[i]! : 1))
+        return { part, group, load: own.largest.stated, range: own.range, unit, about: isAbout(members) }
+      }
+      return [...(group.limit_W ? [inUnit('W')] : []), ...(group.limit_A ? [inUnit('A')] : [])]
+    }),
+  )
+  const totals = supplies.map((part): SupplyTotalLoad => {
+    const members = outputsOf(part, () => true)
+    const own = meter(members, (i) => volts[i]!)
+    return { part, load_W: own.largest.stated, range_W: own.range, about: isAbout(members) }
+  })
+
   const timeline: StageStep[] = []
-
-  for (let moment = 0; moment < momentIds.length; moment++)
-    for (let scenario = 0; scenario < scenarios.length; scenario++)
-      walk(islands.all, outlets, moment, scenario, rails.length, (time, now) => {
-        const keep = (of: Kept, value: number) => {
-          const row = scenario === 0 ? of.stated : scenario === 1 ? of.range.low : of.range.high
-          row[moment] = Math.max(row[moment]!, value)
-        }
-        rails.forEach((rail, i) => keep({ stated: rail.current_A, range: rail.range_A }, now[i]!))
-        for (const { load, members } of groups)
-          keep({ stated: load.load, range: load.range }, weighted(members, now, load.unit === 'W' ? volts : null))
-        for (const { load, members } of totals)
-          keep({ stated: load.load_W, range: load.range_W }, weighted(members, now, volts))
-        if (scenario === 0 && plan.staged && momentIds[moment] === 'staged-start')
-          timeline.push({ from_s: time, starting: startingAt(plan, time), rails_A: now.slice() })
+  for (const [m, moment] of momentIds.entries())
+    for (const scenario of scenarios)
+      walk(islands.all, outlets, m, scenario, outputs.length, (time, now_A) => {
+        for (const each of meters) each.read(now_A, m, scenario)
+        if (plan.staged && moment === 'staged-start' && scenario === 'stated')
+          timeline.push({ from_s: time, starting: startingAt(plan, time), rails_A: now_A.slice() })
       })
-  return { rails, groups: groups.map(({ load }) => load), totals: totals.map(({ load }) => load), timeline }
+  return { rails, groups, totals, timeline }
 }
 
-interface Kept {
-  stated: Float64Array
-  range: { low: Float64Array; high: Float64Array }
-}
-interface Total {
-  load: SupplyTotalLoad
-  members: number[]
-}
-interface Group {
-  load: SupplyGroupLoad
-  members: number[]
-}
-
-function groupsOf(part: ResolvedPart, indexOf: ReadonlyMap<SupplyRail, number>): Group[] {
-  const supply = part.model.supply!
-  return supply.groups.flatMap((group) => {
-    const members = supply.rails.filter(({ id }) => group.rails.includes(id)).map((rail) => indexOf.get(rail)!)
-    const make = (unit: 'W' | 'A'): Group => ({
-      load: { part, group, load: perMoment(), range: range(), unit, about: false },
-      members,
-    })
-    return [...(group.limit_W ? [make('W')] : []), ...(group.limit_A ? [make('A')] : [])]
-  })
-}
-
-function outletsOf(
-  solved: readonly SolvedLine[],
-  islands: Islands,
-  railIndex: ReadonlyMap<ResolvedPart, ReadonlyMap<SupplyRail, number>>,
-  rails: readonly SupplyRailLoad[],
-): Outlet[][] {
+/** The outlets into each island; marks outputs that deliver a guessed current. */
+function outletsOf(solved: readonly SolvedLine[], islands: Islands, outputs: readonly Output[]): Outlet[][] {
   const outlets: Outlet[][] = islands.all.map(() => [])
   for (const line of solved)
     line.network.branches.forEach((branch, i) => {
       if (branch.kind !== 'feed' || !branch.source.rail) return
-      const rail = railIndex.get(branch.source.part)!.get(branch.source.rail)!
+      const { part, rail } = branch.source
+      const output = outputs.findIndex((candidate) => candidate.part === part && candidate.rail === rail)
       const island = islandOf(line, i, islands)
-      if (!island) return
-      outlets[island.index]!.push({ rail, at: line.columns.branch[i]!, current_A: line.solution.current_A })
-      if (line.about[i] === 1) rails[rail]!.about = true
+      if (!island || output < 0) return
+      outlets[island.index]!.push({ output, at: line.columns.branch[i]!, line })
+      if (line.about[i] === 1) outputs[output]!.about = true
     })
   return outlets
 }
 
-/** Visits every step of a moment in order of time with the current of each rail. */
+/** Visits every step of a moment in order of time with the current of each output. */
 function walk(
   islands: readonly Island[],
   outlets: readonly (readonly Outlet[])[],
   moment: number,
-  scenario: number,
-  railCount: number,
-  visit: (time: number, now: Float64Array) => void,
+  scenario: Scenario,
+  outputs: number,
+  visit: (time: number, now_A: Float64Array) => void,
 ): void {
-  const now = new Float64Array(railCount)
+  const now_A = new Float64Array(outputs)
   const enter = (island: Island, step: number) => {
-    const column = scenario * island.cases + island.first[moment]! + step
-    for (const { rail, at, current_A } of outlets[island.index]!) {
-      now[rail]! += current_A[at + column]!
-      if (step > 0) now[rail]! -= current_A[at + column - 1]!
+    const column = island.first[moment]! + step
+    for (const { output, at, line } of outlets[island.index]!) {
+      const { current_A } = line[scenario]
+      now_A[output]! += current_A[at + column]!
+      if (step > 0) now_A[output]! -= current_A[at + column - 1]!
     }
   }
   const later: { time: number; island: Island; step: number }[] = []
@@ -148,12 +154,12 @@ function walk(
     const times = island.times[moment]!
     for (let step = 1; step < times.length; step++) later.push({ time: times[step]!, island, step })
   }
-  visit(0, now)
+  visit(0, now_A)
   later.sort((a, b) => a.time - b.time)
   for (let i = 0; i < later.length;) {
     const { time } = later[i]!
     for (; i < later.length && later[i]!.time === time; i++) enter(later[i]!.island, later[i]!.step)
-    visit(time, now)
+    visit(time, now_A)
   }
 }
 

@@ -2,8 +2,9 @@ import type { Plan } from './plan.ts'
 import { solveCore } from './core.ts'
 
 /**
- * Where each node's and branch's values stand. A node has one value a column (a moment, a step of a timeline);
- * parts of the network that nothing but a held node joins may have different numbers of columns.
+ * Where each node's and branch's values stand. A node has one value a column (a moment, a step of a timeline).
+ * Parts of the network that nothing but a held node joins may have different numbers of columns; a node behind which
+ * nothing is drawn needs none.
  */
 export interface Columns {
   /** Node `i` owns values `node[i]` up to `node[i + 1]`. Held nodes may own none. */
@@ -26,14 +27,13 @@ export function evenColumns(plan: Plan, width: number): Columns {
   return { node: even(plan.nodes), branch: even(plan.from.length) }
 }
 
-/** Columns of branches from those of the nodes: a branch has as many as its wider end. */
-export function columnsOf({ from, to }: Plan, node: Int32Array): Columns {
+/** Columns of branches: those of the node that hangs by it, in a loop those of its wider end. */
+export function columnsOf({ from, to, pruned, via, core }: Plan, node: Int32Array): Columns {
+  const width = (at: number) => node[at + 1]! - node[at]!
   const branch = new Int32Array(from.length + 1)
-  for (let i = 0; i < from.length; i++) {
-    const u = from[i]!
-    const v = to[i]!
-    branch[i + 1] = branch[i]! + Math.max(node[u + 1]! - node[u]!, node[v + 1]! - node[v]!)
-  }
+  for (let i = 0; i < pruned.length; i++) branch[via[i]! + 1] = width(pruned[i]!)
+  for (const inLoop of core) branch[inLoop + 1] = Math.max(width(from[inLoop]!), width(to[inLoop]!))
+  for (let i = 0; i < from.length; i++) branch[i + 1]! += branch[i]!
   return { node, branch }
 }
 
