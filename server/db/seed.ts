@@ -86,7 +86,7 @@ async function renewDemoBuild(context: Context, build: Build, document: BuildDoc
         requestId: null,
         authorId: newest.authorId,
       },
-      { transaction },
+      { transaction, returning: false },
     )
     await build.update(
       {

@@ -108,6 +108,6 @@ export async function writeBuild(
   )
   await BuildRevision.create(
     { buildId: id, revision: 1, document, hash, edits: [], label, base: 0, requestId: null, authorId },
-    { transaction },
+    { transaction, returning: false },
   )
 }

@@ -5,7 +5,7 @@ import { check } from '#shared/check/check.ts'
 import type { CheckResult } from '#shared/check/result.ts'
 
 /** Builds up to this size are checked at once: it takes less than handing them to another process. */
-export const inlineParts = 400
+export const inlineParts = 60
 
 /** No check may take longer; one that does is broken off, and its process with it. */
 const most_ms = 60_000

@@ -58,7 +58,7 @@ export async function saveRevision(
         authorId,
         savedAt,
       },
-      { transaction },
+      { transaction, returning: false },
     )
     await build.update(
       {
