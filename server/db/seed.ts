@@ -74,7 +74,7 @@ async function renewDemoBuild(context: Context, build: Build, document: BuildDoc
     const newest = await BuildRevision.findOne({ where, attributes: ['hash', 'authorId'], transaction })
     if (newest?.hash !== build.demoHash) return
     const revision = build.revision + 1
-    await BuildRevision.create(
+    await BuildRevision.append(
       {
         buildId: build.id,
         revision,
@@ -85,8 +85,9 @@ async function renewDemoBuild(context: Context, build: Build, document: BuildDoc
         base: build.revision,
         requestId: null,
         authorId: newest.authorId,
+        savedAt: new Date(),
       },
-      { transaction, returning: false },
+      transaction,
     )
     await build.update(
       {

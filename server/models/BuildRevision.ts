@@ -5,6 +5,7 @@ import {
   type InferAttributes,
   type InferCreationAttributes,
   type Sequelize,
+  type Transaction,
 } from 'sequelize'
 import type { Edit } from '#shared/build/changes.ts'
 import type { BuildDocument } from '#shared/build/document.ts'
@@ -23,6 +24,33 @@ export class BuildRevision extends Model<InferAttributes<BuildRevision>, InferCr
   declare requestId: string | null
   declare authorId: string | null
   declare savedAt: CreationOptional<Date>
+
+  /** Writes a revision. Not by `create`, which would copy the whole document and read it back. */
+  static async append(
+    values: Omit<InferCreationAttributes<BuildRevision>, 'savedAt'> & { savedAt: Date },
+    transaction: Transaction,
+  ): Promise<void> {
+    await BuildRevision.sequelize?.query(
+      `INSERT INTO build_revisions
+         (build_id, revision, document, hash, edits, label, base, request_id, author_id, saved_at)
+       VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10)`,
+      {
+        bind: [
+          values.buildId,
+          values.revision,
+          JSON.stringify(values.document),
+          values.hash,
+          JSON.stringify(values.edits),
+          values.label,
+          values.base,
+          values.requestId,
+          values.authorId,
+          values.savedAt,
+        ],
+        transaction,
+      },
+    )
+  }
 
   static define(database: Sequelize): void {
     BuildRevision.init(

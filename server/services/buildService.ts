@@ -106,8 +106,19 @@ export async function writeBuild(
     },
     { transaction },
   )
-  await BuildRevision.create(
-    { buildId: id, revision: 1, document, hash, edits: [], label, base: 0, requestId: null, authorId },
-    { transaction, returning: false },
+  await BuildRevision.append(
+    {
+      buildId: id,
+      revision: 1,
+      document,
+      hash,
+      edits: [],
+      label,
+      base: 0,
+      requestId: null,
+      authorId,
+      savedAt: new Date(),
+    },
+    transaction,
   )
 }

@@ -45,7 +45,7 @@ export async function saveRevision(
     const resolved = refuseLooseEnds(standing, document, catalog.index)
     const revision = build.revision + 1
     const savedAt = new Date()
-    await BuildRevision.create(
+    await BuildRevision.append(
       {
         buildId,
         revision,
@@ -58,7 +58,7 @@ export async function saveRevision(
         authorId,
         savedAt,
       },
-      { transaction, returning: false },
+      transaction,
     )
     await build.update(
       {
