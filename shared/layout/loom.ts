@@ -1,5 +1,8 @@
 import type { DrawnNode, DrawnRun } from './drawing.ts'
+import { groupBy, push } from './groupBy.ts'
+import { lanesOf, viaOf, type Lane } from './lanes.ts'
 import { loom, snap } from './metrics.ts'
+import { pullsOf, type Pulls } from './pulls.ts'
 import { separate, type Stacked } from './separate.ts'
 import type { Place } from './tag.ts'
 
@@ -30,9 +33,6 @@ export interface LoomPlan {
   gapOf(column: number): number
 }
 
-/** Most places kept free for passing runs; beyond that a diagram is no longer read by eye and runs go straight. */
-const mostLanes = 20_000
-
 /** Something that takes room in a column: a tag, or a run on its way past. */
 interface Entry {
   node?: DrawnNode
@@ -40,13 +40,6 @@ interface Entry {
   key: number
   order: number
   stacked: Stacked
-}
-
-/** The heights at which a long run passes the columns between its ends, from the strip outwards. */
-interface Lane {
-  link: Link
-  first: number
-  heights: number[]
 }
 
 /**
@@ -94,20 +87,6 @@ function columnEdges({ side, edge, gapOf, under }: LoomPlan, widths: readonly nu
     x = own + sign * width
     return own
   })
-}
-
-/** Room for runs that pass columns. */
-function lanesOf({ links, columns, under }: LoomPlan): Lane[] {
-  const lanes: Lane[] = []
-  let total = 0
-  for (const link of links) {
-    const first = (columns.get(link.near.node) ?? under - 1) + 1
-    const passed = (columns.get(link.far.node) ?? 0) - first
-    if (passed <= 0) continue
-    total += passed
-    lanes.push({ link, first, heights: [] })
-  }
-  return total > mostLanes ? [] : lanes
 }
 
 /** Height that a link comes in at from the column before. */
@@ -170,86 +149,4 @@ function gapBetween(above: Entry | undefined, below: Entry | undefined): number 
   if (above.lane || below.lane) return loom.laneGap
   const small = (node: DrawnNode | undefined) => node?.compact || node?.kind === 'stub'
   return small(above.node) || small(below.node) ? loom.compactGap : loom.nodeGap
-}
-
-/** Two points a column: where the run enters its lane and where it leaves it, in the run's own direction. */
-function viaOf(lane: Lane, side: 'left' | 'right', edges: readonly number[], widths: readonly number[]) {
-  const sign = side === 'left' ? -1 : 1
-  const points = lane.heights.flatMap((y, i) => {
-    const column = lane.first + i
-    const x = edges[column] ?? 0
-    return [
-      { x, y },
-      { x: x + sign * (widths[column] ?? 0), y },
-    ]
-  })
-  return lane.link.run.from.node === lane.link.far.node.id ? points.reverse() : points
-}
-
-/** Where along the strip every node belongs, before any is placed. */
-interface Pulls {
-  columns: ReadonlyMap<DrawnNode, number>
-  heights: ReadonlyMap<DrawnNode, number>
-  /** Nodes that lead to no row: they stand below the rest and do not draw what feeds them away from its drives. */
-  low: ReadonlySet<DrawnNode>
-}
-
-function pullsOf(plan: LoomPlan, nearLinks: ReadonlyMap<DrawnNode, readonly Link[]>): Pulls {
-  const { columns, homes, links, floor } = plan
-  const heights = new Map<DrawnNode, number>()
-  const low = new Set<DrawnNode>()
-  const inwards = [...columns.keys()].sort((a, b) => (columns.get(a) ?? 0) - (columns.get(b) ?? 0))
-  for (const node of inwards) {
-    const reached = (nearLinks.get(node) ?? []).flatMap((link) => {
-      if (!columns.has(link.near.node)) return [link.near.node.y + link.near.port.y]
-      return low.has(link.near.node) ? [] : (heights.get(link.near.node) ?? [])
-    })
-    if (reached.length > 0) heights.set(node, mean(reached))
-    else low.add(node)
-  }
-  const farLink = new Map<DrawnNode, Link>()
-  for (const link of links) if (!farLink.has(link.near.node)) farLink.set(link.near.node, link)
-  for (const node of inwards.reverse()) {
-    if (!low.has(node)) continue
-    const link = farLink.get(node)
-    const isIdle = link && !homes.has(node) && !nearLinks.has(node)
-    const beside = isIdle ? besideSiblings(link, nearLinks.get(link.far.node) ?? [], heights, low) : undefined
-    heights.set(node, beside ?? homes.get(node) ?? floor)
-    if (beside !== undefined) low.delete(node)
-  }
-  return { columns, heights, low }
-}
-
-/** An outlet that leads nowhere yet stands between what its neighbours lead to. */
-function besideSiblings(
-  link: Link,
-  siblings: readonly Link[],
-  heights: ReadonlyMap<DrawnNode, number>,
-  low: ReadonlySet<DrawnNode>,
-): number | undefined {
-  let above: number | undefined
-  let below: number | undefined
-  for (const { near, far } of siblings) {
-    if (near.node === link.near.node || low.has(near.node)) continue
-    const height = heights.get(near.node) ?? near.node.y + near.port.y
-    if (far.port.y < link.far.port.y) above = Math.max(above ?? -Infinity, height)
-    else below = Math.min(below ?? Infinity, height)
-  }
-  if (above !== undefined && below !== undefined) return (above + below) / 2
-  if (above !== undefined) return above + 32
-  return below === undefined ? undefined : below - 32
-}
-
-const mean = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length
-
-function push<K, V>(map: Map<K, V[]>, key: K, value: V): void {
-  const list = map.get(key)
-  if (list) list.push(value)
-  else map.set(key, [value])
-}
-
-function groupBy<K, V>(values: readonly V[], keyOf: (value: V) => K): Map<K, V[]> {
-  const groups = new Map<K, V[]>()
-  for (const value of values) push(groups, keyOf(value), value)
-  return groups
 }

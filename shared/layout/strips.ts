@@ -5,15 +5,14 @@ import { snap, strip } from './metrics.ts'
 import { bayConnectors, groupRows, seatedDrive, type Row, type RowGroup } from './rows.ts'
 import { addPort, type Places } from './tag.ts'
 
-/** Every strip under the other, at x = 0 unless somebody moved it. Frames come before what stands in them. */
+/** Every strip under the other, at x = 0. Frames come before what stands in them. */
 export function placeStrips(build: ResolvedBuild, places: Places): DrawnNode[] {
   const nodes: DrawnNode[] = []
   let top = 0
   for (const group of groupRows(build)) {
-    const own = group.holder?.part.position
-    const made = placeGroup(group, places, own?.x ?? 0, own?.y ?? top)
+    const made = placeGroup(group, places, top)
     for (const node of made.nodes) nodes.push(node)
-    if (!own) top = made.bottom + strip.stackGap
+    top = made.bottom + strip.stackGap
   }
   return nodes
 }
@@ -23,7 +22,8 @@ interface Spot {
   node: DrawnNode
 }
 
-function placeGroup({ holder, rows }: RowGroup, places: Places, x: number, y: number) {
+function placeGroup({ holder, rows }: RowGroup, places: Places, y: number) {
+  const x = 0
   const isCase = holder?.model.kind === 'case'
   const gutter = rows.some(({ backplane }) => backplane) || !isCase ? strip.gutter : 0
   const rowsX = x + strip.framePad + gutter
@@ -94,13 +94,12 @@ function placeGroup({ holder, rows }: RowGroup, places: Places, x: number, y: nu
 }
 
 function rowNode(row: Row, holder: ResolvedPart | undefined, x: number, y: number): DrawnNode {
-  const own = row.slot === undefined ? row.drive?.part.position : undefined
   const node: DrawnNode = {
     id: row.drive?.part.id ?? `${holder?.part.id ?? ''}#${row.slot ?? 0}`,
     kind: row.drive ? 'drive-row' : 'empty-bay',
     part: row.drive?.part.id ?? holder?.part.id ?? '',
-    x: own?.x ?? x,
-    y: own?.y ?? y,
+    x,
+    y,
     width: strip.rowWidth,
     height: strip.rowHeight,
     ports: [],

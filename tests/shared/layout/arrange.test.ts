@@ -198,6 +198,42 @@ describe('a part that somebody moved', () => {
   })
 })
 
+describe('a case that somebody moved', () => {
+  const build = tenDrives()
+  const before = arrange(build)
+  build.document.parts.find(({ id }) => id === 'case')!.position = { x: 60, y: -400 }
+  const after = arrange(build)
+  const shift = (id: string) => {
+    const [old, now] = [before, after].map(({ nodes }) => nodes.find((node) => node.id === id)!)
+    return { x: now!.x - old!.x, y: now!.y - old!.y }
+  }
+
+  it('takes its bays along', () =>
+    expect(['case', 'C1', 'C10', 'case#12'].map(shift)).toEqual(Array.from({ length: 4 }, () => ({ x: 60, y: -400 }))))
+
+  it('leaves the looms where they are', () => {
+    for (const id of ['T', 'W1', 'W5', 'W8', 'K1', 'K2', 'W8~tail-1'])
+      expect([id, shift(id)]).toEqual([id, { x: 0, y: 0 }])
+  })
+})
+
+describe('a drive without a bay that somebody moved', () => {
+  it('stands where it was put and leaves the looms where they are', () => {
+    const parts = [
+      { id: 'T', model: 'supply' },
+      { id: 'A', model: 'case-12' },
+      { id: 'x', model: 'drive' },
+    ]
+    const before = arrange(buildOf(parts))
+    const after = arrange(
+      buildOf(parts.map((part) => (part.id === 'x' ? { ...part, position: { x: -900, y: 70 } } : part))),
+    )
+    const find = ({ nodes }: Drawing, id: string) => nodes.find((node) => node.id === id)!
+    expect(find(after, 'x')).toMatchObject({ x: -900, y: 70 })
+    expect(find(after, 'T').x).toBe(find(before, 'T').x)
+  })
+})
+
 describe('any document', () => {
   it('is arranged without a clash, with every connector and joint, the same each time', () => {
     fc.assert(

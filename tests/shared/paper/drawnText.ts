@@ -1,4 +1,3 @@
-import { JSDOM } from 'jsdom'
 import { textWidth } from '#shared/paper/text/textWidth.ts'
 
 export interface DrawnText {
@@ -9,8 +8,13 @@ export interface DrawnText {
   height: number
 }
 
-/** Parses a drawing as XML; throws where it is not well formed. */
-export const parseSvg = (svg: string): Document => new JSDOM(svg, { contentType: 'image/svg+xml' }).window.document
+/** Parses a drawing as XML; throws where it is not well formed. Needs a page's DOMParser. */
+export function parseSvg(svg: string): Document {
+  const parsed = new DOMParser().parseFromString(svg, 'image/svg+xml')
+  const trouble = parsed.querySelector('parsererror')
+  if (trouble) throw new Error(trouble.textContent ?? 'not well formed')
+  return parsed
+}
 
 /** Every line of text of a drawing with the area that its letters take. */
 export function drawnTexts(svg: string): DrawnText[] {

@@ -1,3 +1,4 @@
+// @vitest-environment jsdom
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { ResolvedBuild } from '#shared/build/resolve.ts'
@@ -129,6 +130,10 @@ describe.each(Object.entries(samples))('text on the sheet of %s', (_, build) => 
     )
     expect(clashes).toEqual([])
   })
+})
+
+describe('the parser of these tests', () => {
+  it('refuses what is not well formed', () => expect(() => parseSvg('<svg><text>&</svg>')).toThrow())
 })
 
 describe('any document', () => {
