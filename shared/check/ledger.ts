@@ -1,6 +1,7 @@
 import type { ResolvedBuild } from '../build/resolve.ts'
 import { lineName } from '../electrical/lines.ts'
 import type { ContactLoad, ConductorLoad, DeviceLoad, PerMoment, PowerResult } from '../electrical/result.ts'
+import { nothing } from '../electrical/branchValues.ts'
 import { allowedVoltage, isStart } from '../electrical/tolerance.ts'
 import { conductorName, contactName, railName } from '../electrical/names.ts'
 import { momentIds, type LedgerRow, type MomentId, type Subject } from './result.ts'
@@ -12,7 +13,8 @@ type RowHead = Pick<LedgerRow, 'kind' | 'name' | 'rail' | 'unit' | 'about'> & { 
 
 /**
  * The power ledger: for each moment that the build has, every rail, group, supply, contact, wire and device with load,
- * limit and margin. Currents are magnitudes. Planes of boards have no limit of their own and are left out.
+ * limit and margin. Currents are magnitudes. Planes of boards have no limit of their own and are left out, as are
+ * contacts and wires behind which nothing draws.
  */
 export function ledgerRows(build: ResolvedBuild, power: PowerResult): LedgerRow[] {
   const moments = momentIds
@@ -60,9 +62,11 @@ export function ledgerRows(build: ResolvedBuild, power: PowerResult): LedgerRow[
       isStart(moment) ? (peakTotal_W?.value ?? sustained) : sustained,
     )
   }
-  for (const contact of power.contacts) addRows(contactHead(contact), contact.current_A, () => contact.limit_A)
+  for (const contact of power.contacts)
+    if (contact.current_A !== nothing) addRows(contactHead(contact), contact.current_A, () => contact.limit_A)
   for (const conductor of power.conductors)
-    if (conductor.limit_A !== null) addRows(conductorHead(conductor), conductor.current_A, () => conductor.limit_A)
+    if (conductor.limit_A !== null && conductor.current_A !== nothing)
+      addRows(conductorHead(conductor), conductor.current_A, () => conductor.limit_A)
   for (const device of power.devices)
     if (device.fedBy.length > 0)
       addRows(deviceHead(device), device.voltage_V, (moment) => allowedVoltage(device, moment, build.settings).lowest_V)

@@ -4,6 +4,7 @@ import type { Draw } from './attach.ts'
 import { nothing } from './branchValues.ts'
 import { courseOf, type Course } from './courses.ts'
 import { states, type RailCurrents, type State } from './deviceCurrents.ts'
+import { onlyWay } from './downstream.ts'
 import type { Island, Islands } from './islands.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import { pathToSource } from './pathToSource.ts'
@@ -80,12 +81,13 @@ function voltages(
     atHigh_V: [] as number[],
     drop_V: { wire: [] as number[], contact: [] as number[], return: [] as number[] },
   }
+  const way = onlyWay(supplied.network, node)
   for (let m = 0; m < momentIds.length; m++) {
     const { volts, column } = lowest(supplied.stated, returned.stated, m)
     found.voltage_V.push(volts)
     found.aged_V.push(lowest(supplied.aged, returned.aged, m).volts)
     found.atHigh_V.push(lowest(supplied.high, returned.high, m).volts)
-    const { wire, contact } = dropOnTheWay(supplied, node, column)
+    const { wire, contact } = dropOnTheWay(supplied, way, node, column)
     found.drop_V.wire.push(wire)
     found.drop_V.contact.push(contact)
     found.drop_V.return.push(0 - returned.stated.voltage_V[atReturn + column]!)
@@ -93,11 +95,16 @@ function voltages(
   return found
 }
 
-/** Shares the rail's drop between wires and contacts along the path of the current. */
-function dropOnTheWay({ network, columns, stated }: SolvedLine, node: number, column: number) {
+/** Shares the rail's drop between wires and contacts along the way of the current, through loops by its main path. */
+function dropOnTheWay(line: SolvedLine, way: readonly number[], node: number, column: number) {
+  const { network, columns, stated } = line
+  const { branches } = network
+  const last = way.at(-1)
+  const ends = last !== undefined && branches[last]!.kind === 'feed'
+  const path = ends ? way : pathToSource(network, columns, stated, node, column)
   const drop = { wire: 0, contact: 0 }
-  for (const branch of pathToSource(network, columns, stated, node, column)) {
-    const { kind } = network.branches[branch]!
+  for (const branch of path) {
+    const { kind } = branches[branch]!
     if (kind === 'feed') continue
     drop[kind] += Math.abs(stated.current_A[columns.branch[branch]! + column]!) * network.new_ohm[branch]!
   }

@@ -23,6 +23,7 @@ export function judgeHeat(
   limit_A: number,
   settings: Settings,
 ): Verdict | null {
+  if (staysBelow(current_A, limit_A * settings.derating)) return null
   return worstOf(applies, current_A, (moment, load) => {
     const severity = heatSeverity(load, limit_A, isStart(moment), settings)
     return severity && { severity: lessSureInWake(moment, severity), moment, load, limit: limit_A }
@@ -55,6 +56,7 @@ export function judgeSupply(
   settings: Settings,
   secondsAbove: (moment: MomentId) => number,
 ): Verdict | null {
+  if (staysBelow(loads, sustained * settings.derating)) return null
   return worstOf(applies, loads, (moment, load) => {
     const start = isStart(moment)
     const covered =
@@ -67,6 +69,9 @@ export function judgeSupply(
     return exceeds(load, stated * settings.derating) ? { severity: 'caution', moment, load, limit: sustained } : null
   })
 }
+
+/** In every moment: most hops are far from their limit and need no further look. */
+const staysBelow = (loads: PerMoment, limit: number): boolean => !loads.some((load) => exceeds(Math.abs(load), limit))
 
 /** A wake only happens where drives are let to sleep: what fails in no other moment is a caution. */
 const lessSureInWake = (moment: MomentId, severity: Severity): Severity =>

@@ -6,24 +6,21 @@ import { lineName } from './lines.ts'
 import type { DeviceLoad } from './result.ts'
 
 /** Moments whose currents last for the seconds of a start. */
-export const startMoments: readonly MomentId[] = ['cold-start', 'staged-start', 'wake']
-export const isStart = (moment: MomentId): boolean => startMoments.includes(moment)
+export const isStart = (moment: MomentId): boolean =>
+  moment === 'cold-start' || moment === 'staged-start' || moment === 'wake'
 
-/** Voltages that a device accepts at one moment, and the figure that says so. */
+/** Voltages that a device accepts at one moment. */
 export interface AllowedVoltage {
   lowest_V: number
   highest_V: number
-  figure: Figure
 }
 
-interface Band {
-  lowest_V: number
-  /** Lower edge while motors start, where the guide widens it. */
-  lowestAtStart_V?: number
-  highest_V: number
+interface Band extends AllowedVoltage {
+  /** While motors start, where the guide widens the band. */
+  atStart?: AllowedVoltage
 }
 
-const atxReturns: Readonly<Record<'5V' | '3.3V', Band>> = {
+const atxLowRails: Readonly<Record<'5V' | '3.3V', Band>> = {
   '5V': { lowest_V: 4.75, highest_V: 5.25 },
   '3.3V': { lowest_V: 3.135, highest_V: 3.465 },
 }
@@ -33,10 +30,10 @@ const standards: Readonly<Record<Settings['tolerance'], { source: string; title:
   atx: {
     source: 'S1',
     title: 'ATX12V 2.0',
-    '12V': { lowest_V: 11.4, lowestAtStart_V: 10.8, highest_V: 12.6 },
-    ...atxReturns,
+    '12V': { lowest_V: 11.4, highest_V: 12.6, atStart: { lowest_V: 10.8, highest_V: 12.6 } },
+    ...atxLowRails,
   },
-  atx3: { source: 'S7', title: 'ATX 3.0', '12V': { lowest_V: 11.2, highest_V: 12.6 }, ...atxReturns },
+  atx3: { source: 'S7', title: 'ATX 3.0', '12V': { lowest_V: 11.2, highest_V: 12.6 }, ...atxLowRails },
   server: {
     source: 'S19',
     title: 'server supply, several outputs',
@@ -46,45 +43,47 @@ const standards: Readonly<Record<Settings['tolerance'], { source: string; title:
   },
 }
 
-/** Lower edge at a card's slot, per cent below nominal: PCI Express card specification, from memory. */
-const slotBelow_pct: Readonly<Record<Rail, number>> = { '12V': 8, '5V': 5, '3.3V': 9 }
+/** Tolerance at a card's slot, per cent either way: PCI Express card specification, from memory. */
+const slot_pct: Readonly<Record<Rail, number>> = { '12V': 8, '5V': 5, '3.3V': 9 }
 
 /** What a device must see: by its own maker's figure, else by its slot's, else by the build's supply standard. */
 export function allowedVoltage(device: DeviceLoad, moment: MomentId, settings: Settings): AllowedVoltage {
   const { part, connector, rail } = device
-  const nominal = nominal_V[rail]
+  const start = isStart(moment)
   const own = part.model.drive?.tolerance[rail]
   if (own) {
-    const atStart = isStart(moment) ? own.belowAtStart_pct : undefined
-    const quantity = atStart ?? own.below_pct
-    const below = quantity.value ?? quantity.low ?? 5
-    const above = own.above_pct?.value ?? own.above_pct?.low ?? below
-    const what = `tolerance of ${part.part.ref} on ${lineName[rail]}${atStart ? ' while starting' : ''}`
-    return {
-      lowest_V: nominal * (1 - below / 100),
-      highest_V: nominal * (1 + above / 100),
-      figure: figureOf(quantity, what, '%'),
-    }
+    const { value, low } = (start && own.belowAtStart_pct) || own.below_pct
+    const below = value ?? low ?? slotless_pct
+    return within(rail, below, own.above_pct?.value ?? own.above_pct?.low ?? below)
+  }
+  if (connector.type.side === 'edge') return within(rail, slot_pct[rail], slot_pct[rail])
+  const band = standards[settings.tolerance][rail]
+  return start && band.atStart ? band.atStart : band
+}
+
+/** Taken where a device gives a tolerance without a figure, per cent. */
+const slotless_pct = 5
+
+const within = (rail: Rail, below_pct: number, above_pct: number): AllowedVoltage => ({
+  lowest_V: nominal_V[rail] * (1 - below_pct / 100),
+  highest_V: nominal_V[rail] * (1 + above_pct / 100),
+})
+
+/** The figure behind `allowedVoltage`, for showing. */
+export function toleranceFigure(device: DeviceLoad, moment: MomentId, settings: Settings): Figure {
+  const { part, connector, rail } = device
+  const start = isStart(moment)
+  const own = part.model.drive?.tolerance[rail]
+  if (own) {
+    const widened = start ? own.belowAtStart_pct : undefined
+    const what = `tolerance of ${part.part.ref} on ${lineName[rail]}${widened ? ' while starting' : ''}`
+    return figureOf(widened ?? own.below_pct, what, '%')
   }
   if (connector.type.side === 'edge') {
-    const below = slotBelow_pct[rail]
-    return {
-      lowest_V: nominal * (1 - below / 100),
-      highest_V: nominal * (1 + below / 100),
-      figure: {
-        what: `tolerance of a slot on ${lineName[rail]}`,
-        value: below,
-        unit: '%',
-        origin: 'standard',
-        fromMemory: true,
-      },
-    }
+    const what = `tolerance of a slot on ${lineName[rail]}`
+    return { what, value: slot_pct[rail], unit: '%', origin: 'standard', fromMemory: true }
   }
-  const { source, title, [rail]: band } = standards[settings.tolerance]
-  const lowest_V = (isStart(moment) ? band.lowestAtStart_V : undefined) ?? band.lowest_V
-  return {
-    lowest_V,
-    highest_V: band.highest_V,
-    figure: { what: `lowest ${lineName[rail]}, ${title}`, value: lowest_V, unit: 'V', origin: 'standard', source },
-  }
+  const { source, title } = standards[settings.tolerance]
+  const { lowest_V } = allowedVoltage(device, moment, settings)
+  return { what: `lowest ${lineName[rail]}, ${title}`, value: lowest_V, unit: 'V', origin: 'standard', source }
 }

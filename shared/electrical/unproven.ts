@@ -8,30 +8,21 @@ import { loadFigureWithMostRange } from './evidence.ts'
 import { exceeds, figureOf } from './figures.ts'
 import { lineName } from './lines.ts'
 import { conductorName, contactName, railName } from './names.ts'
-import type { LoadRange, PerMoment, PowerResult } from './result.ts'
+import type { ContactLoad, ConductorLoad, LoadRange, PerMoment, PowerResult } from './result.ts'
 import { allowedVoltage, isStart } from './tolerance.ts'
 
 /** A hop whose verdict would turn within the range of the figure it rests on most. */
-export interface UnprovenHop {
+export interface UnprovenHop extends Turn {
   name: string
   subject: Subject
-  turns: 'to-beyond' | 'to-within' | 'limit-unknown'
-  moment: MomentId
-  share: number
   figure: Figure
 }
 
-interface Hop {
-  name: string
-  subject: Subject
-  stated: PerMoment
-  range: LoadRange
-  limit: number
-  limitLow: number
-  /** What a start may take for its seconds. */
-  startLimit: number
-  limitFigure: Figure | null
-  draws: () => readonly Draw[]
+interface Turn {
+  turns: 'to-beyond' | 'to-within' | 'limit-unknown'
+  moment: MomentId
+  /** How far beyond the limit the far end lies: share of it, or volts. */
+  share: number
 }
 
 interface Context {
@@ -40,161 +31,108 @@ interface Context {
 }
 
 /** All hops whose verdict is not settled by the figures at hand. */
-export function unprovenHops(context: Context): UnprovenHop[] {
+export function unprovenHops({ power, build }: Context): UnprovenHop[] {
+  const { shortTimeAllowance } = build.settings
   return [
-    ...hopsOf(context).flatMap((hop) => judge(context.power, hop)),
-    ...unknownRatings(context.power),
-    ...unsureVoltages(context),
+    ...power.contacts.flatMap((contact) => ofContact(power, contact, shortTimeAllowance)),
+    ...power.conductors.flatMap((wire) => ofWire(power, wire, shortTimeAllowance)),
+    ...ofSupplies(power),
+    ...ofVoltages(power, build),
   ]
 }
 
-function hopsOf({ power, build }: Context): Hop[] {
-  const { shortTimeAllowance } = build.settings
-  const contacts = power.contacts.flatMap((contact): Hop[] => {
-    const { limit_A: limit, limitLow_A, current_A, range_A: range, rating } = contact
-    if (limit === null || limitLow_A === null) return []
-    const draws = () => power.behind(contact.line, contact.branch)
-    const head = { name: contactName(contact), subject: jointSubject(contact.joint) }
-    return [
-      {
-        ...head,
-        stated: current_A,
-        range,
-        limit,
-        limitLow: limitLow_A,
-        startLimit: shortTimeAllowance,
-        limitFigure: rating,
-        draws,
-      },
-    ]
-  })
-  const wires = power.conductors.flatMap((wire): Hop[] => {
-    const { limit_A: limit, limitLow_A, current_A, range_A: range, ampacity } = wire
-    if (limit === null || limitLow_A === null) return []
-    const draws = () => power.behind(wire.conductor.line, wire.branch)
-    const head = { name: conductorName(wire), subject: conductorSubject(wire.part, wire.index) }
-    return [
-      {
-        ...head,
-        stated: current_A,
-        range,
-        limit,
-        limitLow: limitLow_A,
-        startLimit: shortTimeAllowance,
-        limitFigure: ampacity,
-        draws,
-      },
-    ]
-  })
-  return [...contacts, ...wires, ...supplyHops(power)]
+const none: UnprovenHop[] = []
+
+function ofContact(power: PowerResult, contact: ContactLoad, allowance: number): UnprovenHop[] {
+  const { limit_A, limitLow_A, current_A, range_A, rating } = contact
+  const turn =
+    limit_A === null || limitLow_A === null
+      ? turnOfUnknown(power, current_A)
+      : turnOf(power, current_A, range_A, limit_A, limitLow_A, allowance)
+  if (!turn) return none
+  const figure: Figure | null =
+    turn.turns === 'limit-unknown'
+      ? { what: `rating of one contact, ${contact.weaker.type.name}`, value: null, unit: 'A', origin: 'guess' }
+      : deciding(power, power.behind(contact.line, contact.branch), turn.moment, limit_A! - limitLow_A!, rating)
+  return figure ? [{ name: contactName(contact), subject: jointSubject(contact.joint), ...turn, figure }] : none
 }
 
-function supplyHops(power: PowerResult): Hop[] {
-  const fed = (wanted: (part: object, rail: string) => boolean) => () =>
-    power.draws.filter((_, i) => power.devices[i]!.fedBy.some(({ part, rail }) => wanted(part, rail.id)))
-  const hop = (
-    head: { name: string; subject: Subject },
-    stated: PerMoment,
-    range: LoadRange,
+function ofWire(power: PowerResult, wire: ConductorLoad, allowance: number): UnprovenHop[] {
+  const { limit_A, limitLow_A, current_A, range_A, ampacity } = wire
+  if (limit_A === null || limitLow_A === null) return none
+  const turn = turnOf(power, current_A, range_A, limit_A, limitLow_A, allowance)
+  if (!turn) return none
+  const draws = power.behind(wire.conductor.line, wire.branch)
+  const figure = deciding(power, draws, turn.moment, limit_A - limitLow_A, ampacity)
+  return figure
+    ? [{ name: conductorName(wire), subject: conductorSubject(wire.part, wire.index), ...turn, figure }]
+    : none
+}
+
+function ofSupplies(power: PowerResult): UnprovenHop[] {
+  const judge = (
+    name: string,
+    subject: Subject,
+    unit: 'A' | 'W',
+    loads: { stated: PerMoment; range: LoadRange },
     quantity: Quantity | undefined,
     peak: Quantity | undefined,
-    unit: 'A' | 'W',
-    draws: () => readonly Draw[],
-  ): Hop[] => {
+    feeds: (source: { part: object; rail: { id: string } }) => boolean,
+  ): UnprovenHop[] => {
     const limit = quantity?.value ?? quantity?.low
-    if (!quantity || !limit) return []
-    const startLimit = Math.max(1, (peak?.value ?? peak?.low ?? limit) / limit)
-    const limitFigure = figureOf(quantity, `limit of ${head.name}`, unit)
-    return [{ ...head, stated, range, limit, limitLow: quantity.low ?? limit, startLimit, limitFigure, draws }]
+    if (!quantity || !limit) return none
+    const limitLow = quantity.low ?? limit
+    const atStart = Math.max(1, (peak?.value ?? peak?.low ?? limit) / limit)
+    const turn = turnOf(power, loads.stated, loads.range, limit, limitLow, atStart)
+    if (!turn) return none
+    const draws = power.draws.filter((_, i) => power.devices[i]!.fedBy.some(feeds))
+    const stated = figureOf(quantity, `limit of ${name}`, unit)
+    const figure = deciding(power, draws, turn.moment, limit - limitLow, stated)
+    return figure ? [{ name, subject, ...turn, figure }] : none
   }
   return [
     ...power.rails.flatMap(({ part, rail, current_A, range_A }) =>
-      hop(
-        { name: railName(part, rail), subject: railSubject(part, rail.id) },
-        current_A,
-        range_A,
+      judge(
+        railName(part, rail),
+        railSubject(part, rail.id),
+        'A',
+        { stated: current_A, range: range_A },
         rail.limit_A,
         rail.peak_A,
-        'A',
-        fed((source, id) => source === part && id === rail.id),
+        (source) => source.part === part && source.rail === rail,
       ),
     ),
     ...power.groups.flatMap(({ part, group, load, range, unit }) =>
-      hop(
-        { name: `${part.part.ref} ${group.name}`, subject: railSubject(part, group.id, 'group') },
-        load,
-        range,
+      judge(
+        `${part.part.ref} ${group.name}`,
+        railSubject(part, group.id, 'group'),
+        unit,
+        { stated: load, range },
         unit === 'W' ? group.limit_W : group.limit_A,
         undefined,
-        unit,
-        fed((source, id) => source === part && group.rails.includes(id)),
+        (source) => source.part === part && group.rails.includes(source.rail.id),
       ),
     ),
     ...power.totals.flatMap(({ part, load_W, range_W }) =>
-      hop(
-        { name: nameOf(part), subject: partSubject(part) },
-        load_W,
-        range_W,
+      judge(
+        nameOf(part),
+        partSubject(part),
+        'W',
+        { stated: load_W, range: range_W },
         part.model.supply!.total_W,
         part.model.supply!.peakTotal_W,
-        'W',
-        fed((source) => source === part),
+        (source) => source.part === part,
       ),
     ),
   ]
 }
 
-/** Compares the stated load with the far ends of loads and limit; keeps the moment that turns by most. */
-function judge(power: PowerResult, hop: Hop): UnprovenHop[] {
-  let found: Pick<UnprovenHop, 'turns' | 'moment' | 'share'> | null = null
-  for (const [m, moment] of momentIds.entries()) {
-    if (!power.applies.has(moment)) continue
-    const factor = isStart(moment) ? hop.startLimit : 1
-    const beyond = exceeds(Math.abs(hop.stated[m]!), hop.limit * factor)
-    const worstShare = hop.range.high[m]! / (hop.limitLow * factor)
-    const bestShare = hop.range.low[m]! / (hop.limit * factor)
-    const turns = beyond ? (exceeds(bestShare, 1) ? null : 'to-within') : exceeds(worstShare, 1) ? 'to-beyond' : null
-    if (turns && exceeds(worstShare, found?.share ?? 0)) found = { turns, moment, share: worstShare }
-  }
-  const figure = found && decidingFigure(power, hop, found.moment)
-  return found && figure ? [{ name: hop.name, subject: hop.subject, ...found, figure }] : []
-}
-
-/** The figure whose range moves the verdict most: the limit's, or one of the loads'. */
-function decidingFigure(power: PowerResult, hop: Hop, moment: MomentId): Figure | null {
-  const byLoad = loadFigureWithMostRange(power, hop.draws(), moment)
-  const limitRange = hop.limit - hop.limitLow
-  return byLoad && byLoad.range >= limitRange
-    ? byLoad.figure
-    : limitRange > 0
-      ? hop.limitFigure
-      : (byLoad?.figure ?? null)
-}
-
-/** Loaded contacts whose rating nobody states. */
-function unknownRatings(power: PowerResult): UnprovenHop[] {
-  return power.contacts.flatMap((contact): UnprovenHop[] => {
-    if (contact.limit_A !== null) return []
-    const loaded = momentIds.find((moment, m) => power.applies.has(moment) && contact.current_A[m] !== 0)
-    if (!loaded) return []
-    return [
-      {
-        name: contactName(contact),
-        subject: jointSubject(contact.joint),
-        turns: 'limit-unknown',
-        moment: loaded,
-        share: 0,
-        figure: { what: `rating of one contact, ${contact.weaker.type.name}`, value: null, unit: 'A', origin: 'guess' },
-      },
-    ]
-  })
-}
-
-function unsureVoltages({ power, build }: Context): UnprovenHop[] {
+function ofVoltages(power: PowerResult, build: ResolvedBuild): UnprovenHop[] {
   return power.devices.flatMap((device, i): UnprovenHop[] => {
-    if (device.fedBy.length === 0) return []
+    if (device.fedBy.length === 0) return none
     let lowest: { moment: MomentId; by_V: number } | null = null
-    for (const [m, moment] of momentIds.entries()) {
+    for (let m = 0; m < momentIds.length; m++) {
+      const moment = momentIds[m]!
       if (!power.applies.has(moment)) continue
       const { lowest_V } = allowedVoltage(device, moment, build.settings)
       const by_V = lowest_V - device.atHigh_V[m]!
@@ -202,7 +140,7 @@ function unsureVoltages({ power, build }: Context): UnprovenHop[] {
       if (by_V > (lowest?.by_V ?? 0)) lowest = { moment, by_V }
     }
     const byLoad = lowest && loadFigureWithMostRange(power, [power.draws[i]!], lowest.moment)
-    if (!lowest || !byLoad) return []
+    if (!lowest || !byLoad) return none
     return [
       {
         name: `${device.part.part.ref} on ${lineName[device.rail]}`,
@@ -214,4 +152,50 @@ function unsureVoltages({ power, build }: Context): UnprovenHop[] {
       },
     ]
   })
+}
+
+/** Compares the stated load with the far ends of loads and limit; the moment that turns by most. */
+function turnOf(
+  { applies }: PowerResult,
+  stated: PerMoment,
+  range: LoadRange,
+  limit: number,
+  limitLow: number,
+  atStart: number,
+): Turn | null {
+  let found: Turn | null = null
+  for (let m = 0; m < momentIds.length; m++) {
+    const high = range.high[m]!
+    // Most hops are far from any limit: no further look.
+    if (high <= limitLow) continue
+    const moment = momentIds[m]!
+    if (!applies.has(moment)) continue
+    const factor = isStart(moment) ? atStart : 1
+    const share = high / (limitLow * factor)
+    const beyond = exceeds(Math.abs(stated[m]!), limit * factor)
+    const turns = beyond
+      ? !exceeds(range.low[m]!, limit * factor) && ('to-within' as const)
+      : exceeds(share, 1) && ('to-beyond' as const)
+    if (turns && exceeds(share, found?.share ?? 0)) found = { turns, moment, share }
+  }
+  return found
+}
+
+/** Loaded, and nobody states what it may carry. */
+function turnOfUnknown({ applies }: PowerResult, stated: PerMoment): Turn | null {
+  const moment = momentIds.find((candidate, m) => applies.has(candidate) && stated[m] !== 0)
+  return moment ? { turns: 'limit-unknown', moment, share: 0 } : null
+}
+
+/** The figure whose range moves the verdict most: the limit's, or one of the loads'. */
+function deciding(
+  power: PowerResult,
+  draws: readonly Draw[],
+  moment: MomentId,
+  limitRange: number,
+  limitFigure: Figure | null,
+): Figure | null {
+  const byLoad = loadFigureWithMostRange(power, draws, moment)
+  if (byLoad && byLoad.range >= limitRange) return byLoad.figure
+  return limitRange > 0 ? limitFigure : (byLoad?.figure ?? null)
 }

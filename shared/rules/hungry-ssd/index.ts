@@ -23,6 +23,7 @@ interface Hop {
   about: boolean
   draws: () => readonly Draw[]
 }
+type Turns = (load: PerMoment, limit: number | null | undefined) => limit is number
 interface Facts {
   hop: Hop
   drives: ResolvedPart[]
@@ -46,11 +47,13 @@ export const hungrySsd = defineRule<Facts>({
     const scan = momentIndex('full-scan')
     const burst = momentIndex('write-burst')
     const worst = new Map<ResolvedPart | undefined, Facts>()
-    for (const hop of hopsOf(context)) {
-      const room = hop.limit * build.settings.derating
+    const turns = (load: PerMoment, limit: number | null | undefined): limit is number => {
+      const room = (limit ?? 0) * build.settings.derating
+      return room > 0 && exceeds(Math.abs(load[burst]!), room) && !exceeds(Math.abs(load[scan]!), room)
+    }
+    for (const hop of hopsOf(context, turns)) {
       const writing = Math.abs(hop.load[burst]!)
       const reading = Math.abs(hop.load[scan]!)
-      if (!exceeds(writing, room) || exceeds(reading, room)) continue
       const solid = hop.draws().filter(({ part, rail }) => isSolidState(part) && rail === '5V')
       const theirs = solid.reduce((sum, draw) => sum + busiest(power, draw, 'write-burst').value * draw.share, 0)
       if (theirs * (hop.unit === 'W' ? 5 : 1) < writing / 2) continue
@@ -78,9 +81,10 @@ export const hungrySsd = defineRule<Facts>({
   },
 })
 
-function hopsOf({ power }: RuleContext): Hop[] {
+/** The hops on 5 V that are fine in one moment and short of room in the other. */
+function hopsOf({ power }: RuleContext, turns: Turns): Hop[] {
   const contacts = power.contacts.flatMap((contact): Hop[] => {
-    if (contact.line !== '5V' || !contact.limit_A) return []
+    if (contact.line !== '5V' || !turns(contact.current_A, contact.limit_A)) return []
     const draws = () => power.behind('5V', contact.branch)
     const node = contact.joint.a.index
     return [
@@ -102,7 +106,7 @@ function hopsOf({ power }: RuleContext): Hop[] {
     )
   const rails = power.rails.flatMap(({ part, rail, current_A, about }): Hop[] => {
     const limit = rail.limit_A.value ?? rail.limit_A.low
-    if (rail.rail !== '5V' || !limit) return []
+    if (rail.rail !== '5V' || !turns(current_A, limit)) return []
     const subject = railSubject(part, rail.id)
     const draws = onRails(part, [rail.id])
     return [{ name: railName(part, rail), subject, supply: part, load: current_A, limit, unit: 'A', about, draws }]
@@ -111,7 +115,7 @@ function hopsOf({ power }: RuleContext): Hop[] {
     const quantity = unit === 'W' ? group.limit_W : group.limit_A
     const limit = quantity?.value ?? quantity?.low
     const on5V = part.model.supply!.rails.some(({ id, rail }) => rail === '5V' && group.rails.includes(id))
-    if (!on5V || !limit) return []
+    if (!on5V || !turns(load, limit)) return []
     const subject = railSubject(part, group.id, 'group')
     const draws = onRails(part, group.rails)
     return [{ name: `${part.part.ref} ${group.name}`, subject, supply: part, load, limit, unit, about, draws }]

@@ -2,6 +2,7 @@ import type { ResolvedConnector, ResolvedPart } from '../../build/resolve.ts'
 import { connectorSubject, partSubject } from '../../check/subjects.ts'
 import { listed, nameOf, placeOf } from '../../check/words.ts'
 import type { Rail } from '../../quantity/rails.ts'
+import type { Draw } from '../../electrical/attach.ts'
 import { powerNeighbours, railsNeeded, returnReaches } from '../../electrical/feeding.ts'
 import { lineName } from '../../electrical/lines.ts'
 import type { PowerResult } from '../../electrical/result.ts'
@@ -29,13 +30,14 @@ export const railMissing = defineRule<Facts>({
     sources: ['S16', 'S24'],
   },
   check({ build, power }) {
+    const drawsOf = byPart(power.draws)
     return build.parts.flatMap((part) => {
       const needed = railsNeeded(part)
       if (part.model.supply || needed.length === 0) return []
-      const arriving = needed.filter((rail) => arrives(power, part, rail))
+      const arriving = needed.filter((rail) => arrives(power, drawsOf.get(part) ?? [], rail))
       const missing = needed.filter((rail) => !arriving.includes(rail))
       if (arriving.length === 0 || missing.length === 0) return []
-      const at = placeOfDraw(power, part, missing[0]!)
+      const at = drawsOf.get(part)?.find((draw) => draw.rail === missing[0])?.connector ?? part.connectors[0]!
       const open = powerNeighbours(at).length === 0
       return [
         {
@@ -64,14 +66,17 @@ export const railMissing = defineRule<Facts>({
 })
 
 /** The rail arrives with its return where the part draws it. */
-const arrives = (power: PowerResult, part: ResolvedPart, rail: Rail): boolean =>
-  power.draws.some(
-    (draw) =>
-      draw.part === part &&
-      draw.rail === rail &&
-      power.reaches(draw.connector, rail) &&
-      returnReaches(power, draw.connector),
+const arrives = (power: PowerResult, draws: readonly Draw[], rail: Rail): boolean =>
+  draws.some(
+    (draw) => draw.rail === rail && power.reaches(draw.connector, rail) && returnReaches(power, draw.connector),
   )
 
-const placeOfDraw = (power: PowerResult, part: ResolvedPart, rail: Rail): ResolvedConnector =>
-  power.draws.find((draw) => draw.part === part && draw.rail === rail)?.connector ?? part.connectors[0]!
+function byPart(draws: readonly Draw[]): ReadonlyMap<ResolvedPart, readonly Draw[]> {
+  const grouped = new Map<ResolvedPart, Draw[]>()
+  for (const draw of draws) {
+    const others = grouped.get(draw.part)
+    if (others) others.push(draw)
+    else grouped.set(draw.part, [draw])
+  }
+  return grouped
+}

@@ -7,7 +7,7 @@ import { lineName } from '../../electrical/lines.ts'
 import { twoVolts } from '../../electrical/loadWords.ts'
 import { atMoment } from '../../electrical/names.ts'
 import type { DeviceLoad, PowerResult } from '../../electrical/result.ts'
-import { allowedVoltage } from '../../electrical/tolerance.ts'
+import { allowedVoltage, toleranceFigure } from '../../electrical/tolerance.ts'
 import type { Settings } from '../../build/document.ts'
 import { defineRule } from '../rule.ts'
 
@@ -46,6 +46,7 @@ export const voltageOutOfTolerance = defineRule<Facts>({
       const worst = worstVoltage(device, power, build.settings)
       if (!worst) return []
       const { severity, ...facts } = worst
+      const figure = toleranceFigure(device, facts.moment, build.settings)
       return [
         {
           severity,
@@ -55,9 +56,9 @@ export const voltageOutOfTolerance = defineRule<Facts>({
           load: facts.seen_V,
           limit: facts.allowed_V,
           unit: 'V' as const,
-          decidedBy: [facts.figure, ...currentFigure(device, facts.moment)],
+          decidedBy: [figure, ...currentFigure(device, facts.moment)],
           about: device.about,
-          facts: { device, ...facts },
+          facts: { device, ...facts, figure },
         },
       ]
     })
@@ -100,12 +101,12 @@ function worstVoltage(
   device: DeviceLoad,
   { applies }: PowerResult,
   settings: Settings,
-): (Omit<Facts, 'device'> & { severity: Severity }) | null {
+): (Omit<Facts, 'device' | 'figure'> & { severity: Severity }) | null {
   if (device.fedBy.length === 0) return null
-  let worst: (Omit<Facts, 'device'> & { severity: Severity; by_V: number }) | null = null
+  let worst: (Omit<Facts, 'device' | 'figure'> & { severity: Severity; by_V: number }) | null = null
   for (const [m, moment] of momentIds.entries()) {
     if (!applies.has(moment)) continue
-    const { lowest_V, highest_V, figure } = allowedVoltage(device, moment, settings)
+    const { lowest_V, highest_V } = allowedVoltage(device, moment, settings)
     const fresh = device.voltage_V[m]!
     const aged = device.aged_V[m]!
     const keep = (severity: Severity, seen_V: number, allowed_V: number, whenAged: boolean) => {
@@ -115,7 +116,7 @@ function worstVoltage(
         severityRank[severity] < severityRank[worst.severity] ||
         (severity === worst.severity && by_V > worst.by_V + rounding_V)
       )
-        worst = { severity, moment, seen_V, allowed_V, whenAged, figure, by_V }
+        worst = { severity, moment, seen_V, allowed_V, whenAged, by_V }
     }
     if (fresh > highest_V + rounding_V) keep('fault', fresh, highest_V, false)
     else if (fresh < lowest_V - rounding_V) keep(moment === 'wake' ? 'caution' : 'fault', fresh, lowest_V, false)
