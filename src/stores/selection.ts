@@ -11,6 +11,14 @@ export interface Lit {
   connectors: ReadonlySet<string>
 }
 
+/** What should be brought into view; `near` so that it can be read. */
+export interface Shown {
+  parts: readonly string[]
+  joints: readonly string[]
+  near: boolean
+  at: number
+}
+
 const nothing: ReadonlySet<string> = new Set()
 const dark: Lit = { parts: nothing, joints: nothing, connectors: nothing }
 
@@ -25,7 +33,7 @@ export const useSelectionStore = defineStore('selection', () => {
   const bay = ref<string | null>(null)
   const lit = shallowRef<Lit>(dark)
   /** Raised each time that something should be brought into view. */
-  const show = shallowRef<{ parts: readonly string[]; joints: readonly string[]; at: number } | null>(null)
+  const show = shallowRef<Shown | null>(null)
   let shown = 0
 
   const onlyPart = computed(() => (parts.value.size === 1 && joints.value.size === 0 ? [...parts.value][0] : undefined))
@@ -63,11 +71,11 @@ export const useSelectionStore = defineStore('selection', () => {
         : [],
     )
     lit.value = { parts: new Set(litParts), joints: new Set(litJoints), connectors: new Set(connectors) }
-    if (bringIntoView) reveal(litParts, litJoints)
+    if (bringIntoView) reveal(litParts, litJoints, true)
   }
 
-  function reveal(partIds: readonly string[], jointIds: readonly string[] = []): void {
-    show.value = { parts: partIds, joints: jointIds, at: ++shown }
+  function reveal(partIds: readonly string[], jointIds: readonly string[] = [], near = false): void {
+    show.value = { parts: partIds, joints: jointIds, near, at: ++shown }
   }
 
   return {
