@@ -1,4 +1,4 @@
-import type { Unit } from '../quantity/display.ts'
+import { lineNames, type Unit } from '../quantity/display.ts'
 import type { Quantity } from '../quantity/quantity.ts'
 import { rails, type Rail } from '../quantity/rails.ts'
 import type { Load, Model, RailLoad } from './model.ts'
@@ -18,8 +18,6 @@ export interface FigureGroup {
   title: string
   figures: ListedFigure[]
 }
-
-const railNames: Readonly<Record<Rail, string>> = { '12V': '12 V', '5V': '5 V', '3.3V': '3.3 V' }
 
 /** Collects figures under one path, leaving out those that the model does not carry. */
 function gather(base: string) {
@@ -63,7 +61,7 @@ function loadFigures(load: Load | undefined): ListedFigure[] {
 }
 
 function railLoadFigures(rail: Rail, load: RailLoad): ListedFigure[] {
-  const name = railNames[rail]
+  const name = lineNames[rail]
   const { figures, add } = gather(`load.${rail}`)
   add('scan_A', `${name}, at work`, 'A', load.scan_A, true)
   add('rest_A', `${name}, at rest`, 'A', load.rest_A)
@@ -80,9 +78,9 @@ function toleranceFigures({ drive }: Model): ListedFigure[] {
   return rails.flatMap((rail) => {
     const tolerance = drive?.tolerance[rail]
     const { figures, add } = gather(`drive.tolerance.${rail}`)
-    add('below_pct', `${railNames[rail]}, below nominal`, '%', tolerance?.below_pct)
-    add('above_pct', `${railNames[rail]}, above nominal`, '%', tolerance?.above_pct)
-    add('belowAtStart_pct', `${railNames[rail]}, below nominal while starting`, '%', tolerance?.belowAtStart_pct)
+    add('below_pct', `${lineNames[rail]}, below nominal`, '%', tolerance?.below_pct)
+    add('above_pct', `${lineNames[rail]}, above nominal`, '%', tolerance?.above_pct)
+    add('belowAtStart_pct', `${lineNames[rail]}, below nominal while starting`, '%', tolerance?.belowAtStart_pct)
     return figures
   })
 }
@@ -90,7 +88,7 @@ function toleranceFigures({ drive }: Model): ListedFigure[] {
 function railFigures({ supply }: Model): ListedFigure[] {
   return (supply?.rails ?? []).flatMap((rail) => {
     const { figures, add } = gather(`supply.rails.${rail.id}`)
-    const name = rail.id === rail.rail ? railNames[rail.rail] : `${rail.id} (${railNames[rail.rail]})`
+    const name = rail.id === rail.rail ? lineNames[rail.rail] : `${rail.id} (${lineNames[rail.rail]})`
     add('limit_A', `${name}, limit`, 'A', rail.limit_A, true)
     add('peak_A', `${name}, peak`, 'A', rail.peak_A)
     add('peak_s', `${name}, peak holds`, 's', rail.peak_s)

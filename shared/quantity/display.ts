@@ -1,8 +1,17 @@
 import { awgArea_mm2, gaugeOfArea } from '../electrical/copper.ts'
 import type { Quantity } from './quantity.ts'
+import type { Line } from './rails.ts'
 
 /** Units as they are written beside a figure. */
 export type Unit = 'A' | 'W' | 'V' | 'VA' | 'mm' | 'in' | 'mm²' | 'mΩ' | 'TB' | 'Gb/s' | 'MB/s' | 's' | 'h' | '%' | ''
+
+/** Rails and the return as they are written in a sentence or a table. */
+export const lineNames: Readonly<Record<Line, string>> = {
+  '12V': '12\u00a0V',
+  '5V': '5\u00a0V',
+  '3.3V': '3.3\u00a0V',
+  return: 'return',
+}
 
 /** Four digits say more than any datasheet holds; fewer where the figure has fewer. */
 export function formatNumber(value: number, locale?: string): string {

@@ -24,6 +24,6 @@ export function originSentence(quantity: Quantity, sourceTitle?: string): string
   const place = [sourceTitle ?? quantity.source, quantity.clause].filter(Boolean).join(', ')
   const who = [quantity.by && `by ${quantity.by}`, quantity.on && `on ${quantity.on}`].filter(Boolean).join(' ')
   const words = [openings[quantity.origin], who].filter(Boolean).join(' ')
-  const doubt = quantity.fromMemory ? ' Written from memory, not yet checked against the document.' : ''
+  const doubt = quantity.fromMemory ? ' From memory, not yet checked.' : ''
   return `${words}${place ? `: ${place}` : ''}.${doubt}`
 }

@@ -8,4 +8,8 @@ export const severityWords: Readonly<Record<Severity, string>> = {
   note: 'note',
 }
 
+/** "1 fault", "2 faults" */
+export const countWords = (severity: Severity, count: number): string =>
+  `${count} ${severityWords[severity]}${count === 1 ? '' : 's'}`
+
 export const withinWords = 'within the stated limits'
