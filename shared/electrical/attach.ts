@@ -70,7 +70,10 @@ function placesOf(network: LineNetwork, part: ResolvedPart, rail: Rail): readonl
 }
 
 /** Current arrives here through a joint, not through the part's own wires. */
-function isInlet({ plan, branches, towardsSource, inLoops }: LineNetwork, connector: ResolvedConnector): boolean {
+export function isInlet(
+  { plan, branches, towardsSource, inLoops }: LineNetwork,
+  connector: ResolvedConnector,
+): boolean {
   const node = connector.index
   if (plan.reached[node] === 0) return false
   const branch = towardsSource[node]!

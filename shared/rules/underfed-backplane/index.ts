@@ -2,7 +2,9 @@ import type { ResolvedConnector, ResolvedPart } from '../../build/resolve.ts'
 import { connectorSubject, partSubject } from '../../check/subjects.ts'
 import { counted, listed, nameOf } from '../../check/words.ts'
 import { rails } from '../../quantity/rails.ts'
-import { backplaneInlets, powerNeighbours, returnReaches } from '../../electrical/feeding.ts'
+import { isInlet } from '../../electrical/attach.ts'
+import { backplaneInlets, powerNeighbours } from '../../electrical/feeding.ts'
+import { lineIndex } from '../../electrical/lines.ts'
 import type { PowerResult } from '../../electrical/result.ts'
 import { defineRule } from '../rule.ts'
 
@@ -59,8 +61,5 @@ export const underfedBackplane = defineRule<Facts>({
 })
 
 /** A joint of its own brings some rail here: a plane inside the backplane does not count. */
-const isFed = (power: PowerResult, inlet: ResolvedConnector): boolean =>
-  powerNeighbours(inlet).some(
-    (outlet) =>
-      returnReaches(power, outlet) && rails.some((rail) => inlet.contacts[rail] > 0 && power.reaches(outlet, rail)),
-  )
+const isFed = ({ network }: PowerResult, inlet: ResolvedConnector): boolean =>
+  rails.some((rail) => inlet.contacts[rail] > 0 && isInlet(network.byLine[lineIndex[rail]]!, inlet))
