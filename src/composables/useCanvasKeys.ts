@@ -109,7 +109,7 @@ export function useCanvasKeys(cancel: () => void) {
     selection.choose({ parts: [to.part] })
     selection.reveal([to.part])
     const part = build.partById.get(to.part)
-    if (part) diagram.say(describe(part))
+    if (part) diagram.say(describe(part), 'quiet')
     return true
   }
 
@@ -131,6 +131,7 @@ export function useCanvasKeys(cancel: () => void) {
     const others = next.joints.map((joint) => connectorName(joint.a === next ? joint.b : joint.a))
     diagram.say(
       `${connectorName(next)}, ${next.type.name}, ${others.length > 0 ? `joined to ${others.join(' and ')}` : 'free'}`,
+      'quiet',
     )
     return true
   }
@@ -167,7 +168,7 @@ export function useCanvasKeys(cancel: () => void) {
     const next = checks.moments[(at + 1) % Math.max(1, checks.moments.length)]
     if (next) {
       checks.moment = next.moment
-      diagram.say(`Moment: ${next.label}`)
+      diagram.say(`Moment: ${next.label}`, 'quiet')
     }
     return true
   }

@@ -1,5 +1,7 @@
 import { defineStore } from 'pinia'
 import { ref, shallowRef } from 'vue'
+import type { MomentId } from '#shared/check/result.ts'
+import type { ExplainTarget } from '#shared/electrical/explain.ts'
 import type { RailView } from '../diagram/amperes.ts'
 
 /** Acts of the canvas that others ask for, as a toolbar or a key; the canvas fills them in while it stands. */
@@ -18,5 +20,7 @@ export const useCanvasStore = defineStore('canvas', () => {
   const current = shallowRef<string | null>(null)
   /** Dialog that is asked for. */
   const dialog = ref<'connect' | 'outlets' | 'keys' | 'duplicate' | 'settings' | null>(null)
-  return { rail, acts, current, dialog }
+  /** Number whose making is asked for. */
+  const explaining = shallowRef<{ target: ExplainTarget; moment: MomentId } | null>(null)
+  return { explaining, rail, acts, current, dialog }
 })

@@ -9,6 +9,8 @@ import { arrange } from '#shared/layout/arrange.ts'
 import { makeId } from '../diagram/makeId.ts'
 import { emptyHistory, perform, redo as stepForth, undo as stepBack, type History } from './history.ts'
 
+/** Quiet words are for screen readers alone. */
+type Tone = 'note' | 'refusal' | 'quiet'
 type Listener = (edit: Edit, before: BuildDocument, after: BuildDocument) => void
 
 /**
@@ -22,7 +24,7 @@ export const useDiagramStore = defineStore('diagram', () => {
   const catalog = shallowRef<CatalogIndex | null>(null)
   const history = shallowRef<History>(emptyHistory)
   /** What the last gesture had to say, for the bar and for screen readers. */
-  const notice = shallowRef<{ text: string; tone: 'note' | 'refusal'; at: number } | null>(null)
+  const notice = shallowRef<{ text: string; tone: Tone; at: number } | null>(null)
   const listeners = new Set<Listener>()
   let noticed = 0
 
@@ -46,7 +48,7 @@ export const useDiagramStore = defineStore('diagram', () => {
     history.value = emptyHistory
   }
 
-  function say(text: string, tone: 'note' | 'refusal' = 'note'): void {
+  function say(text: string, tone: Tone = 'note'): void {
     notice.value = { text, tone, at: ++noticed }
   }
 

@@ -95,7 +95,8 @@ export function renameBuild(document: BuildDocument, name: string, machine: stri
 /** Accepts a finding with a reason. It comes back when its numbers get worse. */
 export function acceptFinding(finding: Finding, reason: string, by: string, on: string): EditOutcome {
   if (reason.trim() === '') return refuse('Write why it can stay: the reason shows in review and on the papers.')
-  const ref = finding.subjects.find((subject) => subject.ref !== undefined)?.ref
+  const named = finding.subjects.filter((subject) => subject.ref !== undefined)
+  const ref = (named.find((subject) => subject.kind !== 'joint') ?? named[0])?.ref
   return outcome(`Accept ${finding.rule}${ref === undefined ? '' : ` on ${ref}`}`, [
     {
       op: 'acceptFinding',
