@@ -75,5 +75,7 @@ function matches(group: JointGroup, line: JointLine, words: readonly string[]): 
   ]
     .join(' ')
     .toLowerCase()
-  return words.every((word) => text.includes(word))
+  // "bay 2" is not bay 12, nor a drive of 7200 rpm.
+  const numbers = new Set(text.match(/\d+/g))
+  return words.every((word) => (/^\d+$/.test(word) ? numbers.has(word) : text.includes(word)))
 }
