@@ -15,19 +15,19 @@ export interface PlainNetwork {
 export interface NgspiceAnswer {
   /** Voltage of each node, by network. */
   voltage_V: number[][]
-  /** What ngspice says its own analysis took. */
+  /** What ngspice says its own analyses took, all times together. */
   analysis_s: number
 }
 
 /** True where the independent solver is installed (Debian package `ngspice`). */
 export const hasNgspice = (): boolean => spawnSync('ngspice', ['--version']).status === 0
 
-/** Solves many networks in one run of ngspice, each with node names of its own. */
-export function solveWithNgspice(networks: readonly PlainNetwork[]): NgspiceAnswer {
+/** Solves many networks in one run of ngspice, each with node names of its own; `times` over, where time is taken. */
+export function solveWithNgspice(networks: readonly PlainNetwork[], times = 1): NgspiceAnswer {
   const folder = mkdtempSync(join(tmpdir(), 'bayloom-ngspice-'))
   try {
     const file = join(folder, 'networks.cir')
-    writeFileSync(file, netlist(networks))
+    writeFileSync(file, netlist(networks, times))
     const run = spawnSync('ngspice', ['-b', file], { encoding: 'utf8', maxBuffer: 1 << 30, cwd: folder })
     return readAnswer(run.stdout, networks)
   } finally {
@@ -37,7 +37,7 @@ export function solveWithNgspice(networks: readonly PlainNetwork[]): NgspiceAnsw
 
 const name = (network: number, node: number): string => `n${network}x${node}`
 
-function netlist(networks: readonly PlainNetwork[]): string {
+function netlist(networks: readonly PlainNetwork[], times: number): string {
   const lines = ['* networks']
   networks.forEach(({ branches, held, draw_A }, n) => {
     for (const [node, volts] of held) lines.push(`V${n}x${node} ${name(n, node)} 0 DC ${volts}`)
@@ -46,7 +46,17 @@ function netlist(networks: readonly PlainNetwork[]): string {
       if (ampere !== 0) lines.push(`I${n}x${node} ${name(n, node)} 0 DC ${ampere}`)
     })
   })
-  return [...lines, '.control', 'set numdgt=16', 'op', 'print all', 'rusage time', '.endc', '.end', ''].join('\n')
+  return [
+    ...lines,
+    '.control',
+    'set numdgt=16',
+    ...Array<string>(times).fill('op'),
+    'print all',
+    'rusage time',
+    '.endc',
+    '.end',
+    '',
+  ].join('\n')
 }
 
 function readAnswer(output: string, networks: readonly PlainNetwork[]): NgspiceAnswer {

@@ -21,64 +21,61 @@ export function solveCore(
   const plain = core.filter((branch) => resistance_ohm[branch]! > 0)
   const bare = core.filter((branch) => !(resistance_ohm[branch]! > 0))
   const clusters = contract(plan, core, bare)
-
-  const size = clusters.count
   const clusterHeld_V = heldVoltages(plan, clusters, held_V)
-  const factors = factorise(
-    size,
-    clusterHeld_V,
-    plain.length,
-    Int32Array.from(plain, (branch) => clusters.of[from[branch]!]!),
-    Int32Array.from(plain, (branch) => clusters.of[to[branch]!]!),
-    Float64Array.from(plain, (branch) => 1 / resistance_ohm[branch]!),
-  )
-
-  const at = new Int32Array(size + 1)
-  for (let i = 0; i < size; i++) {
-    let width = 0
-    for (const node of clusters.members[i]!) width = Math.max(width, columns.node[node + 1]! - columns.node[node]!)
-    at[i + 1] = at[i]! + (Number.isNaN(clusterHeld_V[i]!) ? width : 0)
+  const from_ = new Int32Array(plain.length)
+  const to_ = new Int32Array(plain.length)
+  const conductance = new Float64Array(plain.length)
+  for (let i = 0; i < plain.length; i++) {
+    from_[i] = clusters.of[from[plain[i]!]!]!
+    to_[i] = clusters.of[to[plain[i]!]!]!
+    conductance[i] = 1 / resistance_ohm[plain[i]!]!
   }
-  const draw = new Float64Array(at[size]!)
-  for (let i = 0; i < size; i++)
-    if (Number.isNaN(clusterHeld_V[i]!))
-      for (const node of clusters.members[i]!)
-        for (let k = 0, own = columns.node[node]!; k < at[i + 1]! - at[i]!; k++) draw[at[i]! + k]! += drawn_A[own + k]!
-  const solved = factors(at, draw)
+  const solveFor = factorise(clusterHeld_V, from_, to_, conductance)
 
-  const fixedAt = (node: number) => clusterHeld_V[clusters.of[node]!]!
-  for (const members of clusters.members)
-    for (const node of members) {
-      if (held[node] === 1) continue
-      const fixed = fixedAt(node)
-      const own = columns.node[node]!
-      const from_ = at[clusters.of[node]!]!
-      for (let k = 0; k < columns.node[node + 1]! - own; k++)
-        voltage_V[own + k] = Number.isNaN(fixed) ? solved[from_ + k]! : fixed
-    }
+  const { node: nodeAt, branch: branchAt } = columns
+  const at = clusterColumns(clusters, clusterHeld_V, nodeAt)
+  const draw = new Float64Array(at[clusters.count]!)
+  for (const node of clusters.nodes) {
+    const cluster = clusters.of[node]!
+    const own = nodeAt[node]!
+    for (let k = 0; k < at[cluster + 1]! - at[cluster]!; k++) draw[at[cluster]! + k]! += drawn_A[own + k]!
+  }
+  const solved = solveFor(at, draw)
 
-  for (const branch of plain) {
+  for (const node of clusters.nodes) {
+    if (held[node] === 1) continue
+    const cluster = clusters.of[node]!
+    const fixed_V = clusterHeld_V[cluster]!
+    const own = nodeAt[node]!
+    for (let k = 0; k < nodeAt[node + 1]! - own; k++)
+      voltage_V[own + k] = Number.isNaN(fixed_V) ? solved[at[cluster]! + k]! : fixed_V
+  }
+
+  for (let i = 0; i < plain.length; i++) {
+    const branch = plain[i]!
     const u = from[branch]!
     const v = to[branch]!
-    const conductance = 1 / resistance_ohm[branch]!
-    const out = columns.branch[branch]!
-    for (let k = 0; k < columns.branch[branch + 1]! - out; k++) {
-      const uV = Number.isNaN(fixedAt(u)) ? solved[at[clusters.of[u]!]! + k]! : fixedAt(u)
-      const vV = Number.isNaN(fixedAt(v)) ? solved[at[clusters.of[v]!]! + k]! : fixedAt(v)
-      const current = (uV - vV) * conductance
+    const uFixed_V = clusterHeld_V[from_[i]!]!
+    const vFixed_V = clusterHeld_V[to_[i]!]!
+    const out = branchAt[branch]!
+    for (let k = 0; k < branchAt[branch + 1]! - out; k++) {
+      const u_V = Number.isNaN(uFixed_V) ? solved[at[from_[i]!]! + k]! : uFixed_V
+      const v_V = Number.isNaN(vFixed_V) ? solved[at[to_[i]!]! + k]! : vFixed_V
+      const current = (u_V - v_V) * conductance[i]!
       current_A[out + k] = current
-      if (held[u] === 0) drawn_A[columns.node[u]! + k]! += current
-      if (held[v] === 0) drawn_A[columns.node[v]! + k]! -= current
+      if (held[u] === 0) drawn_A[nodeAt[u]! + k]! += current
+      if (held[v] === 0) drawn_A[nodeAt[v]! + k]! -= current
     }
   }
   return bare.length > 0 ? shareBare(plan, columns, bare, drawn_A, current_A) : []
 }
 
+/** Nodes of the core, those joined without resistance taken as one cluster. */
 interface Contracted {
   count: number
+  nodes: number[]
   /** Cluster of each node, -1 outside the core. */
   of: Int32Array
-  members: number[][]
 }
 
 function contract({ nodes, from, to }: Plan, core: Int32Array, bare: Int32Array): Contracted {
@@ -86,24 +83,44 @@ function contract({ nodes, from, to }: Plan, core: Int32Array, bare: Int32Array)
   for (const branch of bare) sets.join(from[branch]!, to[branch]!)
   const of = new Int32Array(nodes).fill(-1)
   const numberOf = new Int32Array(nodes).fill(-1)
-  const members: number[][] = []
-  for (const branch of core)
-    for (const node of [from[branch]!, to[branch]!]) {
-      if (of[node] !== -1) continue
-      const root = sets.of(node)
-      if (numberOf[root] === -1) numberOf[root] = members.push([]) - 1
-      of[node] = numberOf[root]!
-      members[of[node]!]!.push(node)
-    }
-  return { count: members.length, of, members }
+  const found: number[] = []
+  let count = 0
+  const take = (node: number) => {
+    if (of[node] !== -1) return
+    const root = sets.of(node)
+    if (numberOf[root] === -1) numberOf[root] = count++
+    of[node] = numberOf[root]!
+    found.push(node)
+  }
+  for (const branch of core) {
+    take(from[branch]!)
+    take(to[branch]!)
+  }
+  return { count, nodes: found, of }
 }
 
 /** Voltage of each cluster that holds a source, the mean where several are tied together; NaN where free. */
-function heldVoltages({ held }: Plan, { members }: Contracted, held_V: Float64Array): Float64Array {
-  return Float64Array.from(members, (nodes) => {
-    const sources = nodes.filter((node) => held[node] === 1)
-    return sources.length === 0 ? NaN : sources.reduce((sum, node) => sum + held_V[node]!, 0) / sources.length
-  })
+function heldVoltages({ held }: Plan, { count, nodes, of }: Contracted, held_V: Float64Array): Float64Array {
+  const sum = new Float64Array(count)
+  const sources = new Int32Array(count)
+  for (const node of nodes)
+    if (held[node] === 1) {
+      sum[of[node]!]! += held_V[node]!
+      sources[of[node]!]!++
+    }
+  return sum.map((volts, cluster) => (sources[cluster] === 0 ? NaN : volts / sources[cluster]!))
+}
+
+/** Where the columns of each free cluster stand: as many as its nodes have. */
+function clusterColumns({ count, nodes, of }: Contracted, clusterHeld_V: Float64Array, nodeAt: Int32Array): Int32Array {
+  const at = new Int32Array(count + 1)
+  for (const node of nodes) {
+    const cluster = of[node]!
+    if (Number.isNaN(clusterHeld_V[cluster]!))
+      at[cluster + 1] = Math.max(at[cluster + 1]!, nodeAt[node + 1]! - nodeAt[node]!)
+  }
+  for (let cluster = 0; cluster < count; cluster++) at[cluster + 1]! += at[cluster]!
+  return at
 }
 
 /**

@@ -1,92 +1,71 @@
 import { CholeskyDecomposition, Matrix } from 'ml-matrix'
+import { ConductanceNetwork, type Elimination } from './eliminate.ts'
 
 /** Solves for the node voltages: `at` places each free node's columns, `draw_A` is what is drawn there. */
 export type Factors = (at: Int32Array, draw_A: Float64Array) => Float64Array
 
-/** Nodes with more neighbours than this are left to the dense solver: eliminating them would fill the network. */
-const maxNeighbours = 16
+/**
+ * Prepares a network of conductances between nodes, some held (`held_V` not NaN), for any currents: elimination as far
+ * as it stays sparse, Cholesky decomposition for the rest.
+ */
+export function factorise(held_V: Float64Array, from: Int32Array, to: Int32Array, conductance: Float64Array): Factors {
+  const held = new Uint8Array(held_V.length)
+  for (let node = 0; node < held.length; node++) if (!Number.isNaN(held_V[node]!)) held[node] = 1
+  const network = new ConductanceNetwork(held)
+  for (let i = 0; i < from.length; i++) network.connect(from[i]!, to[i]!, conductance[i]!)
+  const steps = network.eliminate()
+  const blocks = network.blocks().map((nodes) => decompose(network, nodes, held))
 
-interface Eliminated {
-  node: number
-  /** Sum of its conductances. */
-  pivot: number
-  neighbours: number[]
-  conductances: number[]
+  return (at, draw_A) => {
+    const draw = draw_A.slice()
+    const voltage = new Float64Array(draw_A.length)
+    passOn(steps, held, at, draw)
+    for (const block of blocks) solveBlock(network, block, held_V, at, draw, voltage)
+    substitute(steps, held_V, held, at, draw, voltage)
+    return voltage
+  }
 }
 
-/**
- * Prepares a network of conductances between nodes, some held (`held_V` not NaN), for any currents.
- *
- * Nodes with few neighbours are eliminated one by one, fewest first: a chain becomes one branch, a star becomes a
- * mesh. Pivots are sums of conductances, so nothing cancels. What stays is solved by Cholesky decomposition.
- */
-export function factorise(
-  nodes: number,
+/** Hands what is drawn at each eliminated node on to its neighbours, by their conductances. */
+function passOn(
+  { node, pivot, first, neighbour, conductance }: Elimination,
+  held: Uint8Array,
+  at: Int32Array,
+  draw: Float64Array,
+): void {
+  for (let step = 0; step < node.length; step++) {
+    const own = at[node[step]!]!
+    const width = at[node[step]! + 1]! - own
+    for (let i = first[step]!; i < first[step + 1]!; i++) {
+      if (held[neighbour[i]!] === 1) continue
+      const share = conductance[i]! / pivot[step]!
+      const there = at[neighbour[i]!]!
+      for (let k = 0; k < width; k++) draw[there + k]! += share * draw[own + k]!
+    }
+  }
+}
+
+/** Works back through the eliminated nodes: each stands at the mean of its neighbours, less what is drawn. */
+function substitute(
+  { node, pivot, first, neighbour, conductance }: Elimination,
   held_V: Float64Array,
-  branches: number,
-  from: Int32Array,
-  to: Int32Array,
-  conductance: Float64Array,
-): Factors {
-  const around: Map<number, number>[] = Array.from({ length: nodes }, () => new Map<number, number>())
-  const isHeld = (node: number) => !Number.isNaN(held_V[node]!)
-  const connect = (u: number, v: number, value: number) => {
-    if (u === v) return
-    if (!isHeld(u)) around[u]!.set(v, (around[u]!.get(v) ?? 0) + value)
-    if (!isHeld(v)) around[v]!.set(u, (around[v]!.get(u) ?? 0) + value)
-  }
-  for (let i = 0; i < branches; i++) connect(from[i]!, to[i]!, conductance[i]!)
-
-  const steps: Eliminated[] = []
-  const gone = new Uint8Array(nodes)
-  for (let node = 0; node < nodes; node++) if (isHeld(node)) gone[node] = 1
-
-  for (let limit = 1; limit <= maxNeighbours; limit++) {
-    const stack: number[] = []
-    for (let node = 0; node < nodes; node++) if (gone[node] === 0 && around[node]!.size <= limit) stack.push(node)
-    while (stack.length > 0) {
-      const node = stack.pop()!
-      const map = around[node]!
-      if (gone[node] === 1 || map.size > limit) continue
-      gone[node] = 1
-      const neighbours = [...map.keys()]
-      const conductances = [...map.values()]
-      const pivot = conductances.reduce((sum, value) => sum + value, 0)
-      steps.push({ node, pivot, neighbours, conductances })
-      for (const neighbour of neighbours) if (!isHeld(neighbour)) around[neighbour]!.delete(node)
-      for (let i = 0; i < neighbours.length; i++)
-        for (let j = i + 1; j < neighbours.length; j++)
-          connect(neighbours[i]!, neighbours[j]!, (conductances[i]! * conductances[j]!) / pivot)
-      for (const neighbour of neighbours)
-        if (gone[neighbour] === 0 && around[neighbour]!.size <= limit) stack.push(neighbour)
-    }
-  }
-
-  const blocks = denseBlocks(nodes, gone, around, isHeld)
-  return (at, draw_A) => {
-    const draw = Float64Array.from(draw_A)
-    const voltage = new Float64Array(draw_A.length)
-    for (const { node, pivot, neighbours, conductances } of steps)
-      neighbours.forEach((neighbour, i) => {
-        if (isHeld(neighbour)) return
-        const share = conductances[i]! / pivot
-        for (let k = 0, width = at[node + 1]! - at[node]!; k < width; k++)
-          draw[at[neighbour]! + k]! += share * draw[at[node]! + k]!
-      })
-    for (const block of blocks) solveBlock(block, around, held_V, at, draw, voltage)
-    for (let i = steps.length - 1; i >= 0; i--) {
-      const { node, pivot, neighbours, conductances } = steps[i]!
-      if (pivot === 0) continue
-      for (let k = 0, width = at[node + 1]! - at[node]!; k < width; k++) {
-        let sum = -draw[at[node]! + k]!
-        for (let j = 0; j < neighbours.length; j++) {
-          const neighbour = neighbours[j]!
-          sum += conductances[j]! * (isHeld(neighbour) ? held_V[neighbour]! : voltage[at[neighbour]! + k]!)
-        }
-        voltage[at[node]! + k] = sum / pivot
+  held: Uint8Array,
+  at: Int32Array,
+  draw: Float64Array,
+  voltage: Float64Array,
+): void {
+  for (let step = node.length - 1; step >= 0; step--) {
+    if (pivot[step] === 0) continue
+    const own = at[node[step]!]!
+    const width = at[node[step]! + 1]! - own
+    for (let k = 0; k < width; k++) {
+      let sum = -draw[own + k]!
+      for (let i = first[step]!; i < first[step + 1]!; i++) {
+        const other = neighbour[i]!
+        sum += conductance[i]! * (held[other] === 1 ? held_V[other]! : voltage[at[other]! + k]!)
       }
+      voltage[own + k] = sum / pivot[step]!
     }
-    return voltage
   }
 }
 
@@ -95,43 +74,23 @@ interface Block {
   cholesky: CholeskyDecomposition
 }
 
-/** Groups the nodes that stay into connected blocks and decomposes each block's conductance matrix. */
-function denseBlocks(
-  nodes: number,
-  gone: Uint8Array,
-  around: readonly Map<number, number>[],
-  isHeld: (node: number) => boolean,
-): Block[] {
-  const seen = Uint8Array.from(gone)
-  const blocks: Block[] = []
-  for (let first = 0; first < nodes; first++) {
-    if (seen[first] === 1) continue
-    seen[first] = 1
-    const members = [first]
-    for (const node of members)
-      for (const neighbour of around[node]!.keys())
-        if (seen[neighbour] === 0) {
-          seen[neighbour] = 1
-          members.push(neighbour)
-        }
-    const place = new Map(members.map((node, i) => [node, i]))
-    const matrix = Matrix.zeros(members.length, members.length)
-    members.forEach((node, i) => {
-      let sum = 0
-      for (const [neighbour, value] of around[node]!) {
-        sum += value
-        if (!isHeld(neighbour)) matrix.set(i, place.get(neighbour)!, -value)
-      }
-      matrix.set(i, i, sum)
+function decompose(network: ConductanceNetwork, nodes: number[], held: Uint8Array): Block {
+  const place = new Map(nodes.map((node, i) => [node, i]))
+  const matrix = Matrix.zeros(nodes.length, nodes.length)
+  nodes.forEach((node, i) => {
+    let sum = 0
+    network.forEachNeighbour(node, (neighbour, value) => {
+      sum += value
+      if (held[neighbour] === 0) matrix.set(i, place.get(neighbour)!, -value)
     })
-    blocks.push({ nodes: members, cholesky: new CholeskyDecomposition(matrix) })
-  }
-  return blocks
+    matrix.set(i, i, sum)
+  })
+  return { nodes, cholesky: new CholeskyDecomposition(matrix) }
 }
 
 function solveBlock(
+  network: ConductanceNetwork,
   { nodes, cholesky }: Block,
-  around: readonly Map<number, number>[],
   held_V: Float64Array,
   at: Int32Array,
   draw: Float64Array,
@@ -142,8 +101,9 @@ function solveBlock(
   const right = Matrix.zeros(nodes.length, width)
   nodes.forEach((node, i) => {
     let fromHeld = 0
-    for (const [neighbour, value] of around[node]!)
+    network.forEachNeighbour(node, (neighbour, value) => {
       if (!Number.isNaN(held_V[neighbour]!)) fromHeld += value * held_V[neighbour]!
+    })
     for (let k = 0; k < width; k++) right.set(i, k, fromHeld - draw[at[node]! + k]!)
   })
   const solved = cholesky.solve(right)

@@ -63,7 +63,7 @@ export function planNetwork(topology: Topology): Plan {
     pruned: pruned.subarray(0, count),
     via: via.subarray(0, count),
     core: core.subarray(0, coreCount),
-    reached: Uint8Array.from(held),
+    reached: held.slice(),
   }
   markReached(plan)
   return plan
@@ -77,7 +77,7 @@ function markReached({ nodes, from, to, held, pruned, via, core, reached }: Plan
     const fed = new Uint8Array(nodes)
     for (let node = 0; node < nodes; node++) if (held[node] === 1) fed[cluster.of(node)] = 1
     for (const branch of core)
-      for (const node of [from[branch]!, to[branch]!]) if (fed[cluster.of(node)] === 1) reached[node] = 1
+      if (fed[cluster.of(from[branch]!)] === 1) reached[from[branch]!] = reached[to[branch]!] = 1
   }
   for (let i = pruned.length - 1; i >= 0; i--) {
     const node = pruned[i]!

@@ -23,7 +23,11 @@ export interface Solution {
 
 /** The same number of columns for every node. */
 export function evenColumns(plan: Plan, width: number): Columns {
-  const even = (count: number) => Int32Array.from({ length: count + 1 }, (_, i) => i * width)
+  const even = (count: number) => {
+    const at = new Int32Array(count + 1)
+    for (let i = 0; i < count; i++) at[i + 1] = at[i]! + width
+    return at
+  }
   return { node: even(plan.nodes), branch: even(plan.from.length) }
 }
 
@@ -52,7 +56,7 @@ export function solveNetwork(
 ): Solution {
   const { from, to, pruned, via, reached, held } = plan
   const { node: nodeAt, branch: branchAt } = columns
-  const drawn = Float64Array.from(draw_A)
+  const drawn = draw_A.slice()
   const voltage_V = new Float64Array(draw_A.length)
   const current_A = new Float64Array(branchAt[from.length]!)
 
