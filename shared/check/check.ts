@@ -24,6 +24,12 @@ export interface CheckOptions {
   strict?: boolean
 }
 
+/** Everything that is reckoned before the first rule runs. */
+export interface Analysis extends RuleContext {
+  /** Joints that were turned round for the fixed order. */
+  turned: ReadonlySet<string>
+}
+
 /**
  * The checker: document and catalog in, one answer out. The same call in browser, server, command line and tests, and
  * the same answer for the same document, however its lists are ordered.
@@ -31,15 +37,23 @@ export interface CheckOptions {
  * Never throws on a document that the schema accepts; references that lead nowhere are left out.
  */
 export function check(document: BuildDocument, catalog: CatalogIndex, options: CheckOptions = {}): CheckResult {
+  return acceptIn(judge(analyse(document, catalog), document, options), document)
+}
+
+/** First half: references followed, lanes traced, the power network solved. */
+export function analyse(document: BuildDocument, catalog: CatalogIndex): Analysis {
   const { document: ordered, turned } = inFixedOrder(document)
   const build = resolve(ordered, catalog)
   const data = analyseData(build)
-  const power = analysePower(build, data)
-  const context: RuleContext = { build, data, power }
-  const found = runRules(options.rules ?? rules, context, options.strict ?? false)
-  const findings = markAccepted(withUniqueKeys(sortFindings(found)), document.accepted)
+  return { build, data, power: analysePower(build, data), turned }
+}
+
+/** Second half: rules, findings, words. Nobody has accepted anything yet. */
+export function judge(analysis: Analysis, document: BuildDocument, options: CheckOptions = {}): CheckResult {
+  const { build, data, power, turned } = analysis
+  const found = runRules(options.rules ?? rules, analysis, options.strict ?? false)
+  const findings = withUniqueKeys(sortFindings(found))
   const ledger = ledgerRows(build, power)
-  const moments = turnBack(momentResults(power), turned)
   return {
     build: {
       name: document.name,
@@ -52,11 +66,18 @@ export function check(document: BuildDocument, catalog: CatalogIndex, options: C
     weakestHop: weakestHop(ledger, build.settings.derating),
     findings,
     ledger,
-    moments,
+    moments: turnBack(momentResults(power), turned),
     timeline: timelineSteps(power),
     dataPaths: toDataPaths(data),
     scan: toScanTime(data.scan),
     energy_kWhPerYear: energy_kWhPerYear(power),
     ups_VA: ups_VA(power),
   }
+}
+
+/** Marks in an answer what the people of a document accepted. */
+export function acceptIn(result: CheckResult, { accepted }: BuildDocument): CheckResult {
+  if (accepted.length === 0) return result
+  const findings = markAccepted(result.findings, accepted)
+  return { ...result, findings, ...summarise(findings) }
 }
