@@ -22,7 +22,7 @@ app.use(createPinia())
 const session = useSessionStore()
 connectSession({
   csrfToken: () => session.session?.csrfToken ?? '',
-  renewToken: session.load,
+  renewToken: session.renewToken,
   signInAgain: session.signInAgain,
 })
 

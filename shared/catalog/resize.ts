@@ -5,15 +5,16 @@ export interface Countable {
   id: 'outlets' | 'sockets' | 'sata-ports'
   label: string
   prefix: string
+  least: number
   most: number
 }
 
 const countables: Partial<Record<Model['kind'], Countable>> = {
-  lead: { id: 'outlets', label: 'Outlets on it', prefix: 'out-', most: 12 },
-  splitter: { id: 'outlets', label: 'Outlets on it', prefix: 'out-', most: 12 },
-  adapter: { id: 'outlets', label: 'Outlets on it', prefix: 'out-', most: 12 },
-  supply: { id: 'sockets', label: 'Sockets for drive leads', prefix: 'drive-', most: 16 },
-  board: { id: 'sata-ports', label: 'SATA ports', prefix: 'sata-', most: 24 },
+  lead: { id: 'outlets', label: 'Outlets on it', prefix: 'out-', least: 1, most: 12 },
+  splitter: { id: 'outlets', label: 'Outlets on it', prefix: 'out-', least: 2, most: 12 },
+  adapter: { id: 'outlets', label: 'Outlets on it', prefix: 'out-', least: 1, most: 12 },
+  supply: { id: 'sockets', label: 'Sockets for drive leads', prefix: 'drive-', least: 1, most: 16 },
+  board: { id: 'sata-ports', label: 'SATA ports', prefix: 'sata-', least: 1, most: 24 },
 }
 
 const numbered = (model: Model, prefix: string): ModelConnector[] =>
@@ -32,7 +33,7 @@ export function countableOf(model: Model): (Countable & { count: number }) | und
  */
 export function withCount(model: Model, count: number): Model {
   const countable = countableOf(model)
-  if (!countable || count === countable.count || count < 1 || count > countable.most) return model
+  if (!countable || count === countable.count || count < countable.least || count > countable.most) return model
   return count < countable.count ? shrink(model, countable.prefix, count) : grow(model, countable.prefix, count)
 }
 

@@ -3,6 +3,7 @@ import {
   buildListSchema,
   buildSummarySchema,
   openBuildSchema,
+  openRevisionSchema,
   revisionSchema,
   saveAnswerSchema,
   type BuildList,
@@ -47,9 +48,8 @@ export const saveBuild = (
 export const listRevisions = (buildId: string, page = 1): Promise<Revision[]> =>
   request(z.array(revisionSchema), 'GET', path(buildId, '/revisions'), { query: { page } })
 
-const revisionDocumentSchema = z.object({ revision: z.unknown(), document: z.unknown() })
-export const readRevision = (buildId: string, revision: number): Promise<z.infer<typeof revisionDocumentSchema>> =>
-  request(revisionDocumentSchema, 'GET', path(buildId, `/revisions/${revision}`))
+export const readRevision = (buildId: string, revision: number): Promise<z.infer<typeof openRevisionSchema>> =>
+  request(openRevisionSchema, 'GET', path(buildId, `/revisions/${revision}`))
 
 /** The document itself, as the file that leaves the house. */
 export const exportBuild = (buildId: string): Promise<unknown> => request(z.unknown(), 'GET', path(buildId, '/export'))

@@ -5,7 +5,7 @@ import { isProblem, NetworkError, ProblemError, UnexpectedAnswerError } from './
 /** What the client needs to know of the session. Set once at start, so that `api/` knows no store. */
 export interface ClientSession {
   csrfToken(): string
-  /** Fetches a fresh token after the server no longer takes the old one. */
+  /** Fetches a fresh token after the server no longer takes the old one. Who the page takes as signed in stays. */
   renewToken(): Promise<void>
   /**
    * Called where the session ended while a page was in use. Resolves true once the same person has signed in again,
@@ -58,11 +58,12 @@ async function sendPatiently(method: Method, path: string, options: RequestOptio
   try {
     return await send(method, path, options)
   } catch (error) {
-    if (options.anonymous || !session) throw error
+    if (!session) throw error
     if (isProblem(error, 'forged-request')) {
       await session.renewToken()
       return send(method, path, options)
     }
+    if (options.anonymous) throw error
     if (isProblem(error, 'not-signed-in') && (await session.signInAgain())) return send(method, path, options)
     throw error
   }

@@ -1,5 +1,6 @@
-import { z } from 'zod'
+import type { z } from 'zod'
 import {
+  acceptedInvitationSchema,
   invitationSchema,
   invitationViewSchema,
   memberSchema,
@@ -34,4 +35,4 @@ export const readInvitation = (token: string): Promise<InvitationView> =>
   request(invitationViewSchema, 'GET', `/api/invitations/${step(token)}`, { anonymous: true })
 
 export const acceptInvitation = (token: string): Promise<{ buildId: string }> =>
-  request(z.object({ buildId: z.string() }), 'POST', `/api/invitations/${step(token)}/accept`)
+  request(acceptedInvitationSchema, 'POST', `/api/invitations/${step(token)}/accept`)

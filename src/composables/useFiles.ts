@@ -24,7 +24,7 @@ export const asText = (value: unknown): string => `${JSON.stringify(value, null,
 export type JsonRead = { ok: true; value: unknown } | { ok: false; reason: string }
 
 /** Reads a file as JSON; says why not, in words. */
-export async function readJsonFile(file: File, most_B = 8_000_000): Promise<JsonRead> {
+export async function readJsonFile(file: File, most_B = 4_000_000): Promise<JsonRead> {
   if (file.size > most_B) return { ok: false, reason: `The file is larger than ${most_B / 1_000_000} MB.` }
   try {
     return { ok: true, value: JSON.parse(await file.text()) }

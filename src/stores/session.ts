@@ -22,6 +22,12 @@ export const useSessionStore = defineStore('session', () => {
     session.value = await api.readSession()
   }
 
+  /** A fresh token for the next request. Whoever sits here stays, also where the session itself has ended. */
+  async function renewToken(): Promise<void> {
+    const fresh = await api.readSession()
+    session.value = { ...fresh, user: user.value ?? fresh.user }
+  }
+
   /** Loads once; later calls are free. */
   async function ensure(): Promise<void> {
     if (!session.value) await load()
@@ -75,6 +81,7 @@ export const useSessionStore = defineStore('session', () => {
     asksAgain,
     load,
     ensure,
+    renewToken,
     signIn,
     register,
     signOut,

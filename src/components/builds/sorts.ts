@@ -1,4 +1,4 @@
-import { buildSorts } from '#shared/contract/build.ts'
+import type { buildSorts } from '#shared/contract/build.ts'
 
 export type BuildSort = (typeof buildSorts)[number]
 

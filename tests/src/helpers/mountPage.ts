@@ -25,7 +25,7 @@ export function makeApp(): { pinia: Pinia; router: Router; plugins: unknown[] } 
   const session = useSessionStore()
   connectSession({
     csrfToken: () => session.session?.csrfToken ?? '',
-    renewToken: session.load,
+    renewToken: session.renewToken,
     signInAgain: session.signInAgain,
   })
   const router = makeRouter(createMemoryHistory())
