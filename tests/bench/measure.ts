@@ -6,9 +6,13 @@ export interface Row {
   beside: string
 }
 
-/** Median time of a call, after a warm-up, over at least `runs` calls. */
-export function median_ms(call: () => unknown, runs = 41): number {
-  for (let i = 0; i < Math.max(5, runs >> 1); i++) call()
+/** Calls until the code is warm: for this long, or so many times. */
+const warmUp = { ms: 1500, calls: 1000 }
+
+/** Median time of a call, warm, over `runs` calls. */
+export function median_ms(call: () => unknown, runs = 101): number {
+  const begun = performance.now()
+  for (let i = 0; i < warmUp.calls && performance.now() - begun < warmUp.ms; i++) call()
   const times = Array.from({ length: runs }, () => {
     const start = performance.now()
     call()

@@ -22,15 +22,23 @@ function radial(nodes: number, seed: number): PlainNetwork {
   }
 }
 
-/** The same with one chord for every twelve nodes, between neighbours, as inlets of backplanes make them. */
+/** Backplanes of 24 bays, each fed by four leads whose inlets a plane joins: three loops in 61 nodes. */
 function meshed(nodes: number, seed: number): PlainNetwork {
-  const random = randomStream(seed + 1)
-  const tree = radial(nodes, seed)
-  const chords = Array.from({ length: Math.floor(nodes / 12) }, () => {
-    const from = Math.floor(random() * (nodes - 40))
-    return { from, to: from + 1 + Math.floor(random() * 39), ohm: 0.001 + random() * 0.02 }
-  })
-  return { ...tree, branches: [...tree.branches, ...chords] }
+  const random = randomStream(seed)
+  const ohm = () => 0.0005 + random() * 0.02
+  const branches: PlainNetwork['branches'][number][] = []
+  const draw_A = [0]
+  const add = (from: number, ampere = 0) => {
+    branches.push({ from, to: draw_A.length, ohm: ohm() })
+    return draw_A.push(ampere) - 1
+  }
+  while (draw_A.length < nodes) {
+    // Supply to socket, socket to lead, lead to inlet, then bay and drive.
+    const inlets = Array.from({ length: 4 }, () => add(add(add(0))))
+    inlets.slice(1).forEach((inlet, i) => branches.push({ from: inlets[i]!, to: inlet, ohm: ohm() }))
+    for (const inlet of inlets) for (let bay = 0; bay < 6; bay++) add(add(inlet), random() * 0.5)
+  }
+  return { nodes: draw_A.length, branches, held: new Map([[0, source_V]]), draw_A }
 }
 
 /** Network solve beside the operating point of ngspice, its own analysis time, in the same run. */

@@ -17,10 +17,13 @@ export function solveCore(
   current_A: Float64Array,
 ): number[][] {
   const { from, to, held, reached } = plan
-  const core = plan.core.filter((branch) => reached[from[branch]!] === 1)
-  const plain = core.filter((branch) => resistance_ohm[branch]! > 0)
-  const bare = core.filter((branch) => !(resistance_ohm[branch]! > 0))
-  const clusters = contract(plan, core, bare)
+  const plain: number[] = []
+  const bare: number[] = []
+  for (let i = 0; i < plan.core.length; i++) {
+    const branch = plan.core[i]!
+    if (reached[from[branch]!] === 1) (resistance_ohm[branch]! > 0 ? plain : bare).push(branch)
+  }
+  const clusters = contract(plan, plain, bare)
   const clusterHeld_V = heldVoltages(plan, clusters, held_V)
   const from_ = new Int32Array(plain.length)
   const to_ = new Int32Array(plain.length)
@@ -78,7 +81,7 @@ interface Contracted {
   of: Int32Array
 }
 
-function contract({ nodes, from, to }: Plan, core: Int32Array, bare: Int32Array): Contracted {
+function contract({ nodes, from, to }: Plan, plain: readonly number[], bare: readonly number[]): Contracted {
   const sets = new Clusters(nodes)
   for (const branch of bare) sets.join(from[branch]!, to[branch]!)
   const of = new Int32Array(nodes).fill(-1)
@@ -92,10 +95,11 @@ function contract({ nodes, from, to }: Plan, core: Int32Array, bare: Int32Array)
     of[node] = numberOf[root]!
     found.push(node)
   }
-  for (const branch of core) {
-    take(from[branch]!)
-    take(to[branch]!)
-  }
+  for (const branches of [bare, plain])
+    for (const branch of branches) {
+      take(from[branch]!)
+      take(to[branch]!)
+    }
   return { count, nodes: found, of }
 }
 
@@ -130,7 +134,7 @@ function clusterColumns({ count, nodes, of }: Contracted, clusterHeld_V: Float64
 function shareBare(
   plan: Plan,
   columns: Columns,
-  bare: Int32Array,
+  bare: readonly number[],
   drawn_A: Float64Array,
   current_A: Float64Array,
 ): number[][] {

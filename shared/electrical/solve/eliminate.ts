@@ -53,15 +53,18 @@ export class ConductanceNetwork {
   eliminate(): Elimination {
     const steps: Elimination = { node: [], pivot: [], first: [0], neighbour: [], conductance: [] }
     const nodes = this.#held.length
-    for (let limit = 1; limit <= maxNeighbours; limit++) {
+    // Held nodes do not need a turn; the rest counts down to nothing in most networks before the limit rises far.
+    let left = 0
+    for (let node = 0; node < nodes; node++) if (this.#held[node] === 0) left++
+    for (let limit = 2; limit <= maxNeighbours && left > 0; limit++) {
       const turn: number[] = []
       for (let node = 0; node < nodes; node++) if (this.#isDue(node, limit)) turn.push(node)
-      if (limit > 2 && turn.length === 0 && this.#remaining().length === 0) break
       while (turn.length > 0) {
         const node = turn.pop()!
         if (!this.#isDue(node, limit)) continue
         const start = steps.neighbour.length
         this.#remove(node, steps)
+        left--
         for (let i = start; i < steps.neighbour.length; i++) {
           const neighbour = steps.neighbour[i]!
           if (this.#isDue(neighbour, limit)) turn.push(neighbour)
