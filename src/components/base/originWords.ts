@@ -23,7 +23,9 @@ const openings: Readonly<Record<OriginKind, string>> = {
 export function originSentence(quantity: Quantity, sourceTitle?: string): string {
   const place = [sourceTitle ?? quantity.source, quantity.clause].filter(Boolean).join(', ')
   const who = [quantity.by && `by ${quantity.by}`, quantity.on && `on ${quantity.on}`].filter(Boolean).join(' ')
-  const words = [openings[quantity.origin], who].filter(Boolean).join(' ')
+  const opening =
+    quantity.origin === 'maker' && quantity.by ? 'Read off the label or datasheet' : openings[quantity.origin]
+  const words = [opening, who].filter(Boolean).join(' ')
   const doubt = quantity.fromMemory ? ' From memory, not yet checked.' : ''
   return `${words}${place ? `: ${place}` : ''}.${doubt}`
 }
