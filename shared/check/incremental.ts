@@ -34,10 +34,13 @@ export function createChecker(
 ): (document: BuildDocument) => CheckResult {
   let memory: Memory | null = null
   return (document) => {
-    const reach = memory ? reachOf(memory.document, document) : 'all'
-    if (memory && reach === 'none') memory = { ...memory, document }
+    const known = memory
+    // Forgotten until the answer stands: a check that breaks off leaves nothing half made behind.
+    memory = null
+    const reach = known ? reachOf(known.document, document) : 'all'
+    if (known && reach === 'none') memory = { ...known, document }
     else {
-      const analysis = memory && reach === 'rules' ? carryOver(memory.analysis, document) : analyse(document, catalog)
+      const analysis = known && reach === 'rules' ? carryOver(known.analysis, document) : analyse(document, catalog)
       memory = { document, analysis, bare: judge(analysis, document, options) }
     }
     return acceptIn(memory.bare, document)

@@ -1,7 +1,7 @@
 import { apply } from '#shared/build/apply.ts'
 import type { BuildDocument } from '#shared/build/document.ts'
-import { indexCatalog, type CatalogIndex } from '#shared/catalog/catalog.ts'
-import { check } from '#shared/check/check.ts'
+import { indexCatalog } from '#shared/catalog/catalog.ts'
+import { createChecker } from '#shared/check/incremental.ts'
 import type { CheckerAnswer, CheckerRequest } from './messages.ts'
 
 /** The checker's side of the talk, apart from the worker that it lives in, so that it can be tested without one. */
@@ -10,14 +10,14 @@ export function createDesk(
   soon: (run: () => void) => void,
   now: () => number,
 ) {
-  let catalog: CatalogIndex | null = null
+  let checker: ReturnType<typeof createChecker> | null = null
   let document: BuildDocument | null = null
   let version = 0
   let queued = false
 
   function receive(request: CheckerRequest): void {
     if (request.kind === 'catalog') {
-      catalog = indexCatalog(request.catalog)
+      checker = createChecker(indexCatalog(request.catalog))
       return
     }
     if (request.kind === 'changes') {
@@ -43,10 +43,10 @@ export function createDesk(
 
   function judge(): void {
     queued = false
-    if (!catalog || !document) return
+    if (!checker || !document) return
     const started = now()
     try {
-      const result = check(document, catalog)
+      const result = checker(document)
       answer({ kind: 'result', version, result, took_ms: now() - started })
     } catch (error) {
       answer({ kind: 'failed', version, message: error instanceof Error ? error.message : 'unknown' })
