@@ -6,6 +6,8 @@ import type { EditOutcome } from '#shared/build/edits/outcome.ts'
 import { resolve } from '#shared/build/resolve.ts'
 import type { CatalogIndex } from '#shared/catalog/catalog.ts'
 import { arrange } from '#shared/layout/arrange.ts'
+import type { Drawing } from '#shared/layout/drawing.ts'
+import { looksAlike } from '../diagram/looksAlike.ts'
 import { makeId } from '../diagram/makeId.ts'
 import { emptyHistory, perform, redo as stepForth, undo as stepBack, type History } from './history.ts'
 
@@ -29,13 +31,22 @@ export const useDiagramStore = defineStore('diagram', () => {
   let noticed = 0
 
   const build = computed(() => (document.value && catalog.value ? resolve(document.value, catalog.value) : null))
-  const drawing = computed(() => (build.value ? arrange(build.value) : null))
+  /** Arranged again only where an edit touches what the arrangement depends on. */
+  let arranged: { document: BuildDocument; drawing: Drawing } | null = null
+  const drawing = computed(() => {
+    if (!build.value) return null
+    const { document: now } = build.value
+    if (!arranged || !looksAlike(arranged.document, now)) arranged = { document: now, drawing: arrange(build.value) }
+    else arranged = { ...arranged, document: now }
+    return arranged.drawing
+  })
   const undoLabel = computed(() => history.value.back.at(-1)?.label ?? null)
   const redoLabel = computed(() => history.value.forth.at(-1)?.label ?? null)
 
   function open(id: string, opened: BuildDocument, index: CatalogIndex, editable: boolean): void {
     buildId.value = id
     canEdit.value = editable
+    arranged = null
     catalog.value = index
     document.value = opened
     history.value = emptyHistory

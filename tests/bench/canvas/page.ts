@@ -11,6 +11,7 @@ import { indexCatalog, type Catalog } from '#shared/catalog/catalog.ts'
 import { check } from '#shared/check/check.ts'
 import { arrange } from '#shared/layout/arrange.ts'
 import DiagramCanvas from '../../../src/components/diagram/DiagramCanvas.vue'
+import { useCanvasStore } from '../../../src/stores/canvas.ts'
 import { useChecksStore } from '../../../src/stores/checks.ts'
 import { useDiagramStore } from '../../../src/stores/diagram.ts'
 import { settle, timeFrames } from './frames.ts'
@@ -42,6 +43,9 @@ async function mount(what: 'own' | 'bare', document: BuildDocument, catalog: Cat
     createApp({ render: () => h('div', { style: shell }, [flow()]) }).mount('#app')
   }
   await nextTick()
+  await settle(20)
+  // Both show the whole sheet, so that as much is painted.
+  useCanvasStore(pinia).acts?.fit()
   await settle(20)
   return { nodes: drawing.nodes.length, runs: drawing.runs.length }
 }

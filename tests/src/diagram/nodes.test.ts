@@ -1,7 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { apply } from '#shared/build/apply.ts'
+import type { PartPatch } from '#shared/build/changes.ts'
 import { resolve } from '#shared/build/resolve.ts'
 import { arrange } from '#shared/layout/arrange.ts'
+import { looksAlike } from '../../../src/diagram/looksAlike.ts'
 import { toCanvasNodes } from '../../../src/diagram/nodes.ts'
 import { buildOf, looseParts, smallCatalog } from '../../shared/build/edits/smallShop.ts'
 
@@ -32,5 +34,28 @@ describe('the canvas as a projection', () => {
     expect(toCanvasNodes(arrange(build), build, false).some((node) => node.draggable)).toBe(false)
     const movable = toCanvasNodes(arrange(build), build, true).filter((node) => node.draggable)
     expect(new Set(movable.map((node) => node.type))).toEqual(new Set(['part', 'drive-row', 'case']))
+  })
+})
+
+describe('looksAlike', () => {
+  const { document } = build
+  const change = (patch: PartPatch) => apply(document, [{ op: 'updatePart', id: 'c1', patch }])
+
+  it('passes over what the picture does not depend on', () => {
+    expect(looksAlike(document, change({ serial: 'NEW', role: 'spare', note: 'x' }))).toBe(true)
+  })
+
+  it.each<PartPatch>([
+    { position: { x: 4, y: 8 } },
+    { bay: { case: 'a', slot: 6 } },
+    { bay: null },
+    { model: 'disk-25' },
+  ])('sees %j', (patch) => {
+    expect(looksAlike(document, change(patch))).toBe(false)
+  })
+
+  it('gives the same drawing where it says so', () => {
+    const next = resolve(change({ serial: 'NEW' }), smallCatalog)
+    expect(arrange(next)).toEqual(arrange(build))
   })
 })
