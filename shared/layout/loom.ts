@@ -79,11 +79,13 @@ export function placeLoom(plan: LoomPlan): void {
 /** The edge of each column that faces the strip. */
 function columnEdges({ side, edge, gapOf, under }: LoomPlan, widths: readonly number[]): number[] {
   const sign = side === 'left' ? -1 : 1
-  const gap = (column: number) => (column === 0 && under > 0 ? 0 : gapOf(column))
-  let x = edge
-  for (let column = 0; column < under; column++) x -= sign * (gap(column) + (widths[column] ?? 0))
+  // Underneath the strip the first gap is a full one, however close the tails above stand to it.
+  let x = edge + sign * (gapOf(under) - loom.columnGap)
+  for (let column = 0; column < under; column++) x -= sign * ((widths[column] ?? 0) + (column > 0 ? loom.columnGap : 0))
   return widths.map((width, column) => {
-    const own = x + sign * gap(column)
+    if (column === under) x = edge + sign * gapOf(column)
+    else if (column > 0) x += sign * gapOf(column)
+    const own = x
     x = own + sign * width
     return own
   })

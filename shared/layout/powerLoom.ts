@@ -25,7 +25,8 @@ export function placePowerLoom(members: readonly LoomNode[], runs: readonly Plac
   const deepest = Math.max(0, ...[...depths].map(([node, depth]) => (isLow(node) || isTail(node) ? 0 : depth)))
   for (const node of depths.keys()) if (isTail(node)) depths.set(node, deepest + 1)
   const columns = mirrored(closeRanks(depths))
-  const under = columnsUnder(columns, isLow, strip.width)
+  const hasTails = members.some(({ node }) => isTail(node))
+  const under = columnsUnder(columns, isLow, strip.width + (hasTails ? loom.tailGap : loom.columnGap))
 
   const low = members.filter(({ node }) => isLow(node))
   const below = strip.y + strip.height + 48
@@ -37,7 +38,6 @@ export function placePowerLoom(members: readonly LoomNode[], runs: readonly Plac
   const floor = Math.max(below, ...homes.values()) + 48
   for (const { node, part } of members) if (part.model.kind === 'supply') homes.set(node, strip.y + node.height / 2)
   const outermost = Math.max(0, ...columns.values())
-  const hasTails = members.some(({ node }) => isTail(node))
   placeLoom({
     side: 'left',
     edge: strip.x,
@@ -71,7 +71,7 @@ function columnsUnder(
   }
   if (first === Infinity) return 0
   const wide = widths.slice(0, first).reduce((sum, width) => sum + width + loom.columnGap, -loom.columnGap)
-  return wide <= room + loom.columnGap - loom.nodeGap ? first : 0
+  return wide <= room - loom.nodeGap ? first : 0
 }
 
 /** Heights below the strip, one after the other; what hangs on one of them stands level with it. */

@@ -52,12 +52,15 @@ function drawRun(run: DrawnRun, course: RunCourse, severity: Severity | null, re
 /** Places along the gap that a number is tried at, nearest the middle first. */
 const tries = [0.5, 0.6, 0.4, 0.7, 0.3, 0.8, 0.2, 0.9, 0.1]
 
+/** Connectors stand out from the edges of their tags. */
+const markRoom = 5
+
 /** Amperes on the power runs. A number that finds no free place is left out rather than laid over another. */
 export function drawAmperes(drawing: Drawing, reading: Reading): string {
   const courseOf = courseFinder(drawing)
   const taken = occupancy()
   for (const { kind, x, y, width, height } of drawing.nodes)
-    if (kind === 'part' || kind === 'stub') taken.add({ x, y, width, height })
+    if (kind === 'part' || kind === 'stub') taken.add({ x: x - markRoom, y, width: width + 2 * markRoom, height })
   const power = drawing.runs.filter((run) => run.carries === 'power' && run.kind === 'joint')
   const ranked = power.map((run) => ({ run, severity: strainOf(run, reading) }))
   ranked.sort((a, b) => Number(b.severity !== null) - Number(a.severity !== null))
