@@ -18,6 +18,7 @@ export default defineConfig({
       output: {
         codeSplitting: {
           groups: [
+            { name: 'zod', test: /node_modules[\\/]zod[\\/]|src[\\/]zodWithoutEval/, priority: 4 },
             { name: 'vue', test: /node_modules[\\/](@vue|vue|vue-router|pinia)[\\/]/, priority: 3 },
             { name: 'canvas', test: /node_modules[\\/](@vue-flow|d3-)/, priority: 2 },
           ],

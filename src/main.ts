@@ -1,3 +1,4 @@
+import './zodWithoutEval.ts'
 import './assets/fonts.css'
 import './assets/tokens.css'
 import './assets/base.css'

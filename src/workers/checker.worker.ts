@@ -1,3 +1,4 @@
+import '../zodWithoutEval.ts'
 import { createDesk } from './checkerDesk.ts'
 import type { CheckerRequest } from './messages.ts'
 
