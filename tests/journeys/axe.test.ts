@@ -1,0 +1,85 @@
+import { AxeBuilder } from '@axe-core/playwright'
+import type { Page } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { useBrowser } from '../helpers/browser.ts'
+import { startProduct, type Product } from '../helpers/server.ts'
+import { buildIdOf, signInDemo } from '../helpers/signIn.ts'
+
+/** What a person waits for on each page before it counts as shown. */
+const guestPages: readonly [path: string, heading: string | RegExp][] = [
+  ['/sign-in', 'Sign in'],
+  ['/register', /account/i],
+  ['/password-resets', /password/i],
+]
+const pages: readonly [path: string, heading: string | RegExp][] = [
+  ['/builds', 'Builds'],
+  ['/account', 'Account'],
+  ['/catalog', 'Catalog'],
+  ['/catalog/models/supply-atx-650', /650/],
+  ['/catalog/connectors/sata-power-receptacle', /SATA power receptacle/],
+  ['/catalog/add', /model/i],
+  ['/rules', 'Rules'],
+  ['/rules/contact-over-rating', /./],
+  ['/mailbox', 'Mailbox'],
+  ['/users', /./],
+  ['/nowhere', /./],
+]
+const faces = ['wiring', 'ledger', 'joints', 'findings', 'bays']
+
+describe.each(['light', 'dark'] as const)('axe on every page, %s', (colorScheme) => {
+  const browser = useBrowser()
+  let product: Product
+
+  beforeAll(async () => {
+    product = await startProduct()
+  })
+  afterAll(() => product.stop())
+
+  const serious = async (page: Page) =>
+    (await new AxeBuilder({ page }).analyze()).violations
+      .filter(({ impact }) => impact === 'serious' || impact === 'critical')
+      .map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`)
+
+  it('finds nothing serious before signing in', async () => {
+    const context = await browser.newContext({ colorScheme })
+    const page = await context.newPage()
+    for (const [path, name] of guestPages) {
+      await page.goto(product.url + path)
+      await page.getByRole('heading', { name, level: 1 }).or(page.getByRole('heading', { name })).first().waitFor()
+      expect(await serious(page), path).toEqual([])
+    }
+  })
+
+  it('finds nothing serious on the pages of an administrator', async () => {
+    const context = await browser.newContext({ colorScheme })
+    await signInDemo(context, product.url, 'admin')
+    const page = await context.newPage()
+    for (const [path, name] of pages) {
+      await page.goto(product.url + path)
+      await page.getByRole('heading', { name }).first().waitFor()
+      expect(await serious(page), path).toEqual([])
+    }
+  })
+
+  it('finds nothing serious on the faces of a build', async () => {
+    const context = await browser.newContext({ colorScheme })
+    await signInDemo(context, product.url, 'irma')
+    const id = await buildIdOf(context, product.url, 'North room, as found')
+    const page = await context.newPage()
+    for (const face of faces) {
+      await page.goto(`${product.url}/builds/${id}?show=${face}`)
+      await page
+        .getByRole('status')
+        .filter({ hasText: /^saved, revision/ })
+        .waitFor()
+      await page.getByText(/W1 in/).first().waitFor()
+      expect(await serious(page), face).toEqual([])
+    }
+    await page.goto(`${product.url}/builds/${id}/people`)
+    await page
+      .getByRole('heading', { name: /people/i })
+      .first()
+      .waitFor()
+    expect(await serious(page), 'people').toEqual([])
+  })
+})
