@@ -1,6 +1,16 @@
 import type { ResolvedBuild } from '../build/resolve.ts'
 import { lineName } from '../electrical/lines.ts'
-import type { ContactLoad, ConductorLoad, DeviceLoad, PerMoment, PowerResult } from '../electrical/result.ts'
+import type {
+  ConductorLoad,
+  ContactLoad,
+  DeviceLoad,
+  PerMoment,
+  PowerResult,
+  SupplyGroupLoad,
+  SupplyRailLoad,
+  SupplyTotalLoad,
+} from '../electrical/result.ts'
+import type { Quantity } from '../quantity/quantity.ts'
 import { nothing } from '../electrical/branchValues.ts'
 import { allowedVoltage, isStart } from '../electrical/tolerance.ts'
 import { conductorName, contactName, railName } from '../electrical/names.ts'
@@ -17,84 +27,83 @@ type RowHead = Pick<LedgerRow, 'kind' | 'name' | 'rail' | 'unit' | 'about'> & { 
  * contacts and wires behind which nothing draws.
  */
 export function ledgerRows(build: ResolvedBuild, power: PowerResult): LedgerRow[] {
-  const moments = momentIds
-    .map((moment, index) => ({ moment, index }))
-    .filter(({ moment }) => power.applies.has(moment))
+  const moments = momentIds.filter((moment) => power.applies.has(moment))
   const rows: LedgerRow[] = []
-  const addRows = (head: RowHead, load: PerMoment, limitAt: (moment: MomentId) => number | null) => {
-    for (const { moment, index } of moments) rows.push(row(head, moment, Math.abs(load[index]!), limitAt(moment)))
+  const add = (head: RowHead, load: PerMoment, sustained: number | null, atStart = sustained) => {
+    for (const moment of moments) {
+      const limit = isStart(moment) ? atStart : sustained
+      rows.push(row(head, moment, Math.abs(load[momentIds.indexOf(moment)]!), limit))
+    }
   }
 
-  for (const { part, rail, current_A, about } of power.rails)
-    addRows(
-      {
-        subject: railSubject(part, rail.id),
-        kind: 'rail',
-        name: railName(part, rail),
-        rail: rail.rail,
-        unit: 'A',
-        about,
-      },
-      current_A,
-      (moment) => {
-        const sustained = rail.limit_A.value ?? rail.limit_A.low ?? null
-        return isStart(moment) ? (rail.peak_A?.value ?? sustained) : sustained
-      },
-    )
-  for (const { part, group, load, unit, about } of power.groups) {
-    const limit = unit === 'W' ? group.limit_W : group.limit_A
-    addRows(
-      {
-        subject: railSubject(part, group.id, 'group'),
-        kind: 'group',
-        name: `${part.part.ref} ${group.name}`,
-        unit,
-        about,
-      },
-      load,
-      () => limit?.value ?? limit?.low ?? null,
-    )
+  for (const load of power.rails) {
+    const { limit_A, peak_A } = load.rail
+    const sustained = known(limit_A)
+    add(railHead(load), load.current_A, sustained, known(peak_A) ?? sustained)
   }
-  for (const { part, load_W, about } of power.totals) {
-    const { total_W, peakTotal_W } = part.model.supply!
-    const sustained = total_W.value ?? total_W.low ?? null
-    addRows({ subject: partSubject(part), kind: 'supply', name: nameOf(part), unit: 'W', about }, load_W, (moment) =>
-      isStart(moment) ? (peakTotal_W?.value ?? sustained) : sustained,
-    )
+  for (const load of power.groups)
+    add(groupHead(load), load.load, known(load.unit === 'W' ? load.group.limit_W : load.group.limit_A))
+  for (const load of power.totals) {
+    const { total_W, peakTotal_W } = load.part.model.supply!
+    const sustained = known(total_W)
+    add(supplyHead(load), load.load_W, sustained, known(peakTotal_W) ?? sustained)
   }
   for (const contact of power.contacts)
-    if (contact.current_A !== nothing) addRows(contactHead(contact), contact.current_A, () => contact.limit_A)
+    if (contact.current_A !== nothing) add(contactHead(contact), contact.current_A, contact.limit_A)
   for (const conductor of power.conductors)
     if (conductor.limit_A !== null && conductor.current_A !== nothing)
-      addRows(conductorHead(conductor), conductor.current_A, () => conductor.limit_A)
+      add(conductorHead(conductor), conductor.current_A, conductor.limit_A)
   for (const device of power.devices)
-    if (device.fedBy.length > 0)
-      addRows(deviceHead(device), device.voltage_V, (moment) => allowedVoltage(device, moment, build.settings).lowest_V)
+    if (device.fedBy.length > 0) {
+      const lowest_V = (moment: MomentId) => allowedVoltage(device, moment, build.settings).lowest_V
+      add(deviceHead(device), device.voltage_V, lowest_V('at-rest'), lowest_V('cold-start'))
+    }
   return rows
 }
 
-function row(
-  { subject, kind, name, rail, unit, about }: RowHead,
-  moment: MomentId,
-  load: number,
-  limit: number | null,
-) {
-  const made: LedgerRow = {
-    subject,
-    kind,
-    name,
+const known = (quantity: Quantity | undefined): number | null => quantity?.value ?? quantity?.low ?? null
+
+function row(head: RowHead, moment: MomentId, load: number, limit: number | null): LedgerRow {
+  return {
+    subject: head.subject,
+    kind: head.kind,
+    name: head.name,
+    rail: head.rail,
     moment,
     load,
     limit,
-    unit,
-    margin: limit === null ? null : unit === 'V' ? load - limit : limit - load,
+    unit: head.unit,
+    margin: limit === null ? null : head.unit === 'V' ? load - limit : limit - load,
     share: limit === null || limit === 0 ? null : load / limit,
     shortTime: isStart(moment),
-    about,
+    about: head.about,
   }
-  if (rail !== undefined) made.rail = rail
-  return made
 }
+
+const railHead = ({ part, rail, about }: SupplyRailLoad): RowHead => ({
+  subject: railSubject(part, rail.id),
+  kind: 'rail',
+  name: railName(part, rail),
+  rail: rail.rail,
+  unit: 'A',
+  about,
+})
+
+const groupHead = ({ part, group, unit, about }: SupplyGroupLoad): RowHead => ({
+  subject: railSubject(part, group.id, 'group'),
+  kind: 'group',
+  name: `${part.part.ref} ${group.name}`,
+  unit,
+  about,
+})
+
+const supplyHead = ({ part, about }: SupplyTotalLoad): RowHead => ({
+  subject: partSubject(part),
+  kind: 'supply',
+  name: nameOf(part),
+  unit: 'W',
+  about,
+})
 
 const contactHead = (contact: ContactLoad): RowHead => ({
   subject: jointSubject(contact.joint),

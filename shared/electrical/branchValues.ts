@@ -2,7 +2,6 @@ import { momentIds } from '../check/result.ts'
 import type { Island, Islands } from './islands.ts'
 import type { LineNetwork } from './network.ts'
 import type { PerMoment } from './result.ts'
-import type { Solution } from './solve/solve.ts'
 import type { SolvedLine } from './solveLines.ts'
 
 export const nothing: PerMoment = momentIds.map(() => 0)
@@ -18,25 +17,25 @@ export function islandOf({ network, columns }: SolvedLine, branch: number, islan
 /** Largest current of a branch in each moment, signed `from` to `to` in the sense in which it really flows. */
 export function branchCurrents(line: SolvedLine, branch: number, island: Island | undefined): PerMoment {
   if (!island) return nothing
-  return peaks(line.stated, line.columns.branch[branch]!, island, line.network.line === 'return' ? -1 : 1)
+  return peaks(line.stated.current_A, line.columns.branch[branch]!, island, line.network.line === 'return' ? -1 : 1)
 }
 
 /** Magnitudes at the low and high end of all figures. */
 export function branchRange(line: SolvedLine, branch: number, island: Island | undefined) {
   if (!island) return { low: nothing, high: nothing }
   const at = line.columns.branch[branch]!
-  return { low: peaks(line.low, at, island, 0), high: peaks(line.high, at, island, 0) }
+  return { low: peaks(line.low_A, at, island, 0), high: peaks(line.high.current_A, at, island, 0) }
 }
 
 /** The largest of each moment's columns, times `sense`; with sense 0 its magnitude. */
-function peaks({ current_A }: Solution, at: number, { first }: Island, sense: -1 | 0 | 1): number[] {
-  const largest: number[] = []
+function peaks(current_A: Float64Array, at: number, { first }: Island, sense: -1 | 0 | 1): number[] {
+  const largest = [0, 0, 0, 0, 0, 0]
   for (let m = 0; m < momentIds.length; m++) {
     let most = current_A[at + first[m]!]!
     for (let column = at + first[m]! + 1; column < at + first[m + 1]!; column++)
       if (Math.abs(current_A[column]!) > Math.abs(most)) most = current_A[column]!
     // Adding zero turns a negative zero into a plain one.
-    largest.push((sense === 0 ? Math.abs(most) : sense * most) + 0)
+    largest[m] = (sense === 0 ? Math.abs(most) : sense * most) + 0
   }
   return largest
 }

@@ -9,7 +9,6 @@ import type { Island, Islands } from './islands.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import { pathToSource } from './pathToSource.ts'
 import type { DeviceLoad } from './result.ts'
-import type { Solution } from './solve/solve.ts'
 import type { SolvedLine } from './solveLines.ts'
 import type { StartPlan } from './startPlan.ts'
 
@@ -64,11 +63,11 @@ function voltages(
   const at = supplied.columns.node[node]!
   const atReturn = returned.columns.node[node]!
   // The return is solved as if it, too, were drawn from: its rise is the negative of what comes out.
-  const lowest = (onRail: Solution, onReturn: Solution, m: number) => {
+  const lowest = (onRail_V: Float64Array, onReturn_V: Float64Array, m: number) => {
     let least = Infinity
     let column = first[m]!
     for (let each = column; each < first[m + 1]!; each++) {
-      const volts = onRail.voltage_V[at + each]! + onReturn.voltage_V[atReturn + each]!
+      const volts = onRail_V[at + each]! + onReturn_V[atReturn + each]!
       if (volts >= least) continue
       least = volts
       column = each
@@ -76,24 +75,26 @@ function voltages(
     return { volts: nominal_V[rail] + least, column }
   }
   const found = {
-    voltage_V: [] as number[],
-    aged_V: [] as number[],
-    atHigh_V: [] as number[],
-    drop_V: { wire: [] as number[], contact: [] as number[], return: [] as number[] },
+    voltage_V: zeros(),
+    aged_V: zeros(),
+    atHigh_V: zeros(),
+    drop_V: { wire: zeros(), contact: zeros(), return: zeros() },
   }
   const way = onlyWay(supplied.network, node)
   for (let m = 0; m < momentIds.length; m++) {
-    const { volts, column } = lowest(supplied.stated, returned.stated, m)
-    found.voltage_V.push(volts)
-    found.aged_V.push(lowest(supplied.aged, returned.aged, m).volts)
-    found.atHigh_V.push(lowest(supplied.high, returned.high, m).volts)
+    const { volts, column } = lowest(supplied.stated.voltage_V, returned.stated.voltage_V, m)
+    found.voltage_V[m] = volts
+    found.aged_V[m] = lowest(supplied.aged_V, returned.aged_V, m).volts
+    found.atHigh_V[m] = lowest(supplied.high.voltage_V, returned.high.voltage_V, m).volts
     const { wire, contact } = dropOnTheWay(supplied, way, node, column)
-    found.drop_V.wire.push(wire)
-    found.drop_V.contact.push(contact)
-    found.drop_V.return.push(0 - returned.stated.voltage_V[atReturn + column]!)
+    found.drop_V.wire[m] = wire
+    found.drop_V.contact[m] = contact
+    found.drop_V.return[m] = 0 - returned.stated.voltage_V[atReturn + column]!
   }
   return found
 }
+
+const zeros = (): number[] => [0, 0, 0, 0, 0, 0]
 
 /** Shares the rail's drop between wires and contacts along the way of the current, through loops by its main path. */
 function dropOnTheWay(line: SolvedLine, way: readonly number[], node: number, column: number) {

@@ -23,10 +23,11 @@ export const atMoment = (moment: MomentId): string =>
 export const contactName = ({ weaker, line }: ContactLoad): string => `${placeOf(weaker)}, ${lineName[line]}`
 
 /** "W6 in to out 2, 12 V" */
-export function conductorName({ part, conductor }: ConductorLoad): string {
-  const label = (id: string) => part.connectorById.get(id)?.connector.label ?? id
-  return `${part.part.ref} ${label(conductor.from)} to ${label(conductor.to)}, ${lineName[conductor.line]}`
-}
+export const conductorName = ({ part, conductor }: ConductorLoad): string =>
+  `${part.part.ref} ${labelOf(part, conductor.from)} to ${labelOf(part, conductor.to)}, ${lineName[conductor.line]}`
+
+const labelOf = (part: ResolvedPart, connector: string): string =>
+  part.connectorById.get(connector)?.connector.label ?? connector
 
 /** "T1 12V1", or "T1 12 V" where the supply has no names for its rails. */
 export const railName = ({ part }: ResolvedPart, { id, rail }: SupplyRail): string =>

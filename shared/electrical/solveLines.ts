@@ -5,7 +5,7 @@ import { states } from './deviceCurrents.ts'
 import { fillDraws, type Islands, type Scenario } from './islands.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import type { LineNetwork, PowerNetwork } from './network.ts'
-import { columnsOf, solveNetwork, type Columns, type Solution } from './solve/solve.ts'
+import { columnsOf, solveNetwork, voltagesOf, type Columns, type Solution } from './solve/solve.ts'
 import type { StartPlan } from './startPlan.ts'
 
 /** A solved line: what each branch carries and each node stands at, column by column. */
@@ -14,10 +14,10 @@ export interface SolvedLine {
   columns: Columns
   /** Figures as stated, contacts as new. */
   stated: Solution
-  /** Contacts at the end of their life. */
-  aged: Solution
-  /** All loads at the low and at the high end of their figures. */
-  low: Solution
+  /** Voltages with contacts at the end of their life. */
+  aged_V: Float64Array
+  /** Currents with all loads at the low end of their figures, all of it with them at the high end. */
+  low_A: Float64Array
   high: Solution
   /** 1 for branches whose current rests on an unknown or guessed figure. */
   about: Uint8Array
@@ -44,15 +44,21 @@ export function solveLines(
   return byLine.map((network, i) => {
     const held_V = new Float64Array(network.plan.nodes)
     for (const source of network.sources) held_V[source.node] = source.above_V
-    const solve = (ohm: Float64Array, drawn: readonly Float64Array[]) =>
-      solveNetwork(network.plan, columns[i]!, ohm, held_V, drawn[i]!)
+    const { plan: topology, new_ohm, aged_ohm } = network
+    const at = columns[i]!
+    // Loops share anew when their contacts age; in a tree the currents stay what they are.
+    const meshed = topology.core.length > 0
+    const again = meshed ? stated[i]!.slice() : null
+    const first = solveNetwork(topology, at, new_ohm, held_V, stated[i]!)
     return {
       network,
-      columns: columns[i]!,
-      stated: solve(network.new_ohm, stated),
-      aged: solve(network.aged_ohm, stated),
-      low: solve(network.new_ohm, low),
-      high: solve(network.new_ohm, high),
+      columns: at,
+      stated: first,
+      aged_V: again
+        ? solveNetwork(topology, at, aged_ohm, held_V, again).voltage_V
+        : voltagesOf(topology, at, aged_ohm, held_V, first.current_A),
+      low_A: solveNetwork(topology, at, new_ohm, held_V, low[i]!).current_A,
+      high: solveNetwork(topology, at, new_ohm, held_V, high[i]!),
       about: spreadAbout(network, guessed[i]!),
     }
   })

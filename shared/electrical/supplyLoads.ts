@@ -27,7 +27,7 @@ interface Outlet {
   output: number
   /** First column of the feeding branch. */
   at: number
-  line: SolvedLine
+  current_A: Record<Scenario, Float64Array>
 }
 
 type Scenario = 'stated' | 'low' | 'high'
@@ -45,7 +45,8 @@ class Meter {
   }
 
   read(now_A: Float64Array, moment: number, scenario: Scenario): void {
-    const sum = this.#outputs.reduce((total, output, i) => total + now_A[output]! * this.#weights[i]!, 0)
+    let sum = 0
+    for (let i = 0; i < this.#outputs.length; i++) sum += now_A[this.#outputs[i]!]! * this.#weights[i]!
     const kept = this.largest[scenario]
     if (sum > kept[moment]!) kept[moment] = sum
   }
@@ -55,7 +56,7 @@ class Meter {
   }
 }
 
-const zeros = (): number[] => momentIds.map(() => 0)
+const zeros = (): number[] => [0, 0, 0, 0, 0, 0]
 
 /**
  * Adds up what each supply rail, group and supply delivers: at each step of a moment the sum over all islands, and
@@ -116,16 +117,18 @@ export function addUpSupplies(
 /** The outlets into each island; marks outputs that deliver a guessed current. */
 function outletsOf(solved: readonly SolvedLine[], islands: Islands, outputs: readonly Output[]): Outlet[][] {
   const outlets: Outlet[][] = islands.all.map(() => [])
-  for (const line of solved)
+  for (const line of solved) {
+    const current_A = { stated: line.stated.current_A, low: line.low_A, high: line.high.current_A }
     line.network.branches.forEach((branch, i) => {
       if (branch.kind !== 'feed' || !branch.source.rail) return
       const { part, rail } = branch.source
       const output = outputs.findIndex((candidate) => candidate.part === part && candidate.rail === rail)
       const island = islandOf(line, i, islands)
       if (!island || output < 0) return
-      outlets[island.index]!.push({ output, at: line.columns.branch[i]!, line })
+      outlets[island.index]!.push({ output, at: line.columns.branch[i]!, current_A })
       if (line.about[i] === 1) outputs[output]!.about = true
     })
+  }
   return outlets
 }
 
@@ -141,10 +144,10 @@ function walk(
   const now_A = new Float64Array(outputs)
   const enter = (island: Island, step: number) => {
     const column = island.first[moment]! + step
-    for (const { output, at, line } of outlets[island.index]!) {
-      const { current_A } = line[scenario]
-      now_A[output]! += current_A[at + column]!
-      if (step > 0) now_A[output]! -= current_A[at + column - 1]!
+    for (const { output, at, current_A } of outlets[island.index]!) {
+      const currents = current_A[scenario]
+      now_A[output]! += currents[at + column]!
+      if (step > 0) now_A[output]! -= currents[at + column - 1]!
     }
   }
   const later: { time: number; island: Island; step: number }[] = []

@@ -4,6 +4,7 @@ import { conductorSubject, connectorSubject, jointSubject, partSubject, railSubj
 import { nameOf } from '../check/words.ts'
 import type { Quantity } from '../quantity/quantity.ts'
 import type { Draw } from './attach.ts'
+import { nothing } from './branchValues.ts'
 import { loadFigureWithMostRange } from './evidence.ts'
 import { exceeds, figureOf } from './figures.ts'
 import { lineName } from './lines.ts'
@@ -33,18 +34,17 @@ interface Context {
 /** All hops whose verdict is not settled by the figures at hand. */
 export function unprovenHops({ power, build }: Context): UnprovenHop[] {
   const { shortTimeAllowance } = build.settings
-  return [
-    ...power.contacts.flatMap((contact) => ofContact(power, contact, shortTimeAllowance)),
-    ...power.conductors.flatMap((wire) => ofWire(power, wire, shortTimeAllowance)),
-    ...ofSupplies(power),
-    ...ofVoltages(power, build),
-  ]
+  const found = [...ofSupplies(power), ...ofVoltages(power, build)]
+  for (const contact of power.contacts) found.push(...ofContact(power, contact, shortTimeAllowance))
+  for (const wire of power.conductors) found.push(...ofWire(power, wire, shortTimeAllowance))
+  return found
 }
 
 const none: UnprovenHop[] = []
 
 function ofContact(power: PowerResult, contact: ContactLoad, allowance: number): UnprovenHop[] {
   const { limit_A, limitLow_A, current_A, range_A, rating } = contact
+  if (current_A === nothing) return none
   const turn =
     limit_A === null || limitLow_A === null
       ? turnOfUnknown(power, current_A)
@@ -59,7 +59,7 @@ function ofContact(power: PowerResult, contact: ContactLoad, allowance: number):
 
 function ofWire(power: PowerResult, wire: ConductorLoad, allowance: number): UnprovenHop[] {
   const { limit_A, limitLow_A, current_A, range_A, ampacity } = wire
-  if (limit_A === null || limitLow_A === null) return none
+  if (limit_A === null || limitLow_A === null || current_A === nothing) return none
   const turn = turnOf(power, current_A, range_A, limit_A, limitLow_A, allowance)
   if (!turn) return none
   const draws = power.behind(wire.conductor.line, wire.branch)

@@ -9,7 +9,7 @@ import { readBuildText } from '#shared/build/read.ts'
 import { indexCatalog } from '#shared/catalog/catalog.ts'
 import { loadCatalogFiles } from '../../server/services/catalogFiles.ts'
 import { findChromium } from '../../server/setup/programs.mjs'
-import type { CanvasBench } from './canvas/page.ts'
+import type { CanvasBench, FrameTimes } from './canvas/bench.ts'
 import type { Row } from './measure.ts'
 
 const folder = fileURLToPath(new URL('./canvas/', import.meta.url))
@@ -45,7 +45,7 @@ export async function canvasRows(): Promise<Row[]> {
 async function measure(browser: Browser, out: string): Promise<Row[]> {
   const times = { own: { drag: [], pan: [] }, bare: { drag: [], pan: [] } } as Record<
     'own' | 'bare',
-    Record<'drag' | 'pan', { frame: number[]; work: number[] }[]>
+    Record<'drag' | 'pan', FrameTimes[]>
   >
   const edits: number[] = []
   let size = { nodes: 0, runs: 0 }

@@ -1,6 +1,7 @@
+import { canvasRows } from './canvas.ts'
 import { fullCheckRows } from './fullCheck.ts'
 import { printTable } from './measure.ts'
 import { networkSolveRows } from './networkSolve.ts'
 
 /** `npm run bench`: one table, medians, with something from outside beside each figure where there is such a thing. */
-printTable([...networkSolveRows(), ...fullCheckRows()])
+printTable([...networkSolveRows(), ...fullCheckRows(), ...(await canvasRows())])

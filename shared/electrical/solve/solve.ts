@@ -46,6 +46,7 @@ export function columnsOf({ from, to, pruned, via, core }: Plan, node: Int32Arra
  *
  * One sweep up the pruned trees adds the currents, the core (loops, if any) is solved as a matrix, one sweep down
  * gives the voltages. Branches without resistance are allowed anywhere. What nothing reaches carries nothing.
+ * `draw_A` is used up: afterwards it holds sums.
  */
 export function solveNetwork(
   plan: Plan,
@@ -56,7 +57,6 @@ export function solveNetwork(
 ): Solution {
   const { from, to, pruned, via, reached, held } = plan
   const { node: nodeAt, branch: branchAt } = columns
-  const drawn = draw_A.slice()
   const voltage_V = new Float64Array(draw_A.length)
   const current_A = new Float64Array(branchAt[from.length]!)
 
@@ -70,31 +70,58 @@ export function solveNetwork(
     const width = nodeAt[node + 1]! - nodeAt[node]!
     const own = nodeAt[node]!
     const out = branchAt[branch]!
-    for (let k = 0; k < width; k++) current_A[out + k] = sign * drawn[own + k]!
+    for (let k = 0; k < width; k++) current_A[out + k] = sign * draw_A[own + k]!
     if (held[parent] === 1) continue
     const above = nodeAt[parent]!
-    for (let k = 0; k < width; k++) drawn[above + k]! += drawn[own + k]!
+    for (let k = 0; k < width; k++) draw_A[above + k]! += draw_A[own + k]!
   }
 
   for (let node = 0; node < plan.nodes; node++)
     if (held[node] === 1) voltage_V.fill(held_V[node]!, nodeAt[node]!, nodeAt[node + 1]!)
   const loops =
-    plan.core.length > 0 ? solveCore(plan, columns, resistance_ohm, held_V, drawn, voltage_V, current_A) : []
+    plan.core.length > 0 ? solveCore(plan, columns, resistance_ohm, held_V, draw_A, voltage_V, current_A) : []
 
+  sweepDown(plan, columns, resistance_ohm, held_V, current_A, voltage_V)
+  return { voltage_V, current_A, loops }
+}
+
+/**
+ * The voltages of a network without loops, of which the currents are known: they are the same whatever the
+ * resistances, so that another set of resistances needs no more than this.
+ */
+export function voltagesOf(
+  plan: Plan,
+  columns: Columns,
+  resistance_ohm: Float64Array,
+  held_V: Float64Array,
+  current_A: Float64Array,
+): Float64Array {
+  const voltage_V = new Float64Array(columns.node[plan.nodes]!)
+  sweepDown(plan, columns, resistance_ohm, held_V, current_A, voltage_V)
+  return voltage_V
+}
+
+function sweepDown(
+  { from, to, pruned, via, reached, held }: Plan,
+  { node: nodeAt, branch: branchAt }: Columns,
+  resistance_ohm: Float64Array,
+  held_V: Float64Array,
+  current_A: Float64Array,
+  voltage_V: Float64Array,
+): void {
   for (let i = pruned.length - 1; i >= 0; i--) {
     const node = pruned[i]!
     if (reached[node] === 0) continue
     const branch = via[i]!
-    const parent = from[branch] === node ? to[branch]! : from[branch]!
-    const drop = (to[branch] === node ? 1 : -1) * resistance_ohm[branch]!
+    const downward = to[branch] === node
+    const parent = downward ? from[branch]! : to[branch]!
+    const drop = downward ? resistance_ohm[branch]! : -resistance_ohm[branch]!
     const own = nodeAt[node]!
     const width = nodeAt[node + 1]! - own
     const out = branchAt[branch]!
-    const fixed = held[parent] === 1
-    const base = fixed ? held_V[parent]! : 0
     const above = nodeAt[parent]!
-    for (let k = 0; k < width; k++)
-      voltage_V[own + k] = (fixed ? base : voltage_V[above + k]!) - drop * current_A[out + k]!
+    if (held[parent] === 1)
+      for (let k = 0; k < width; k++) voltage_V[own + k] = held_V[parent]! - drop * current_A[out + k]!
+    else for (let k = 0; k < width; k++) voltage_V[own + k] = voltage_V[above + k]! - drop * current_A[out + k]!
   }
-  return { voltage_V, current_A, loops }
 }

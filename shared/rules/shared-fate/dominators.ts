@@ -1,10 +1,13 @@
+/** Neighbours of each node, both ways; nodes without any may be left out. */
+export type Graph = readonly (readonly number[] | undefined)[]
+
 /**
  * Dominators: which nodes lie on every way from the root to a node. Take one of them away and the node is cut off.
  *
- * `neighbours` is an undirected graph; node 0 is the root. Returns each node's nearest dominator, -1 for nodes that the
+ * Node 0 is the root. Returns each node's nearest dominator, -1 for nodes that the
  * root does not reach; the root is its own. Iterates over the reverse postorder until nothing moves.
  */
-export function nearestDominators(neighbours: readonly (readonly number[])[]): Int32Array {
+export function nearestDominators(neighbours: Graph): Int32Array {
   const order = reversePostorder(neighbours)
   const place = new Int32Array(neighbours.length).fill(-1)
   order.forEach((node, i) => (place[node] = i))
@@ -35,19 +38,21 @@ export function nearestDominators(neighbours: readonly (readonly number[])[]): I
   return nearest
 }
 
-function reversePostorder(neighbours: readonly (readonly number[])[]): number[] {
+function reversePostorder(neighbours: Graph): number[] {
   const seen = new Uint8Array(neighbours.length)
+  const next = new Int32Array(neighbours.length)
   const postorder: number[] = []
-  const stack: { node: number; next: number }[] = [{ node: 0, next: 0 }]
+  const stack = [0]
   seen[0] = 1
-  for (let top = stack.at(-1); top; top = stack.at(-1)) {
-    const onward = neighbours[top.node]?.[top.next++]
+  while (stack.length > 0) {
+    const node = stack[stack.length - 1]!
+    const onward = neighbours[node]?.[next[node]!++]
     if (onward === undefined) {
-      postorder.push(top.node)
+      postorder.push(node)
       stack.pop()
     } else if (!seen[onward]) {
       seen[onward] = 1
-      stack.push({ node: onward, next: 0 })
+      stack.push(onward)
     }
   }
   return postorder.reverse()

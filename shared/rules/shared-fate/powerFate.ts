@@ -28,18 +28,20 @@ export function powerFate(build: ResolvedBuild, power: PowerResult): Map<Resolve
 /** Node 0 is the mains; then every connector; then every part, as the body of a supply between its outlets. */
 function railGraph(build: ResolvedBuild, rail: Rail) {
   const { connectors, parts } = build
-  const neighbours: number[][] = Array.from({ length: 1 + connectors.length + parts.length }, () => [])
+  const neighbours = new Array<number[] | undefined>(1 + connectors.length + parts.length).fill(undefined)
   const link = (a: number, b: number) => {
-    neighbours[a]?.push(b)
-    neighbours[b]?.push(a)
+    ;(neighbours[a] ??= []).push(b)
+    ;(neighbours[b] ??= []).push(a)
   }
   for (const part of parts) {
     const body = 1 + connectors.length + part.index
     if (part.model.supply) link(0, body)
     for (const end of part.connectors) if (end.connector.feeds?.[rail] !== undefined) link(body, end.index + 1)
     for (const { from, to, line } of part.model.wiring) {
-      const [a, b] = [part.connectorById.get(from), part.connectorById.get(to)]
-      if (line === rail && a && b) link(a.index + 1, b.index + 1)
+      if (line !== rail) continue
+      const a = part.connectorById.get(from)
+      const b = part.connectorById.get(to)
+      if (a && b) link(a.index + 1, b.index + 1)
     }
   }
   for (const { a, b, mating } of build.joints)

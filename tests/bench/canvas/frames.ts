@@ -1,3 +1,5 @@
+import type { FrameTimes } from './bench.ts'
+
 const frame = (): Promise<number> => new Promise((done) => requestAnimationFrame(done))
 
 export async function settle(frames: number): Promise<void> {
@@ -5,7 +7,7 @@ export async function settle(frames: number): Promise<void> {
 }
 
 /** Presses on an element, moves the pointer a little each frame in a circle, and lets go. */
-export async function timeFrames(target: HTMLElement, frames: number): Promise<{ frame: number[]; work: number[] }> {
+export async function timeFrames(target: HTMLElement, frames: number): Promise<FrameTimes> {
   const box = target.getBoundingClientRect()
   const isPane = box.width > 600
   const start = isPane ? { x: innerWidth - 40, y: innerHeight - 40 } : { x: box.x + box.width / 2, y: box.y + 6 }

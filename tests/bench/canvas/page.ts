@@ -14,16 +14,8 @@ import DiagramCanvas from '../../../src/components/diagram/DiagramCanvas.vue'
 import { useCanvasStore } from '../../../src/stores/canvas.ts'
 import { useChecksStore } from '../../../src/stores/checks.ts'
 import { useDiagramStore } from '../../../src/stores/diagram.ts'
+import type { CanvasBench } from './bench.ts'
 import { settle, timeFrames } from './frames.ts'
-
-/** What the bench asks of the page. */
-export interface CanvasBench {
-  mount(what: 'own' | 'bare', document: BuildDocument, catalog: Catalog): Promise<{ nodes: number; runs: number }>
-  /** Milliseconds of each frame while a node or the sheet follows the pointer. */
-  time(what: 'drag' | 'pan', frames: number): Promise<{ frame: number[]; work: number[] }>
-  /** From an edit to the frame in which the canvas shows it, without the check. */
-  timeEdit(times: number): Promise<number[]>
-}
 
 const shell = 'position: absolute; inset: 0'
 const pinia = createPinia()
