@@ -1,3 +1,3 @@
 import { runScript } from './script.mjs'
 
-await runScript('tests/fuzz/index.ts')
+await runScript('tests/fuzz/index.ts', { tools: ['ngspice'] })

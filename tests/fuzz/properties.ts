@@ -7,6 +7,7 @@ import { checkResultSchema, type CheckResult } from '#shared/check/result.ts'
 import { loadCatalogFiles } from '../../server/services/catalogFiles.ts'
 import { report } from '../../server/cli/report/report.ts'
 import { damaged, garbage } from './garbage.ts'
+import { networksAgree, networksStaySound } from './networks.ts'
 import { shuffled } from './shuffled.ts'
 import { wildDocument } from './wildDocument.ts'
 
@@ -121,6 +122,8 @@ export const fuzzProperties: readonly FuzzProperty[] = [
         },
       ),
   },
+  { name: 'random networks agree with ngspice to 1e-9 of the source', weight: 0.05, property: networksAgree },
+  { name: 'any network is solved to numbers that keep Kirchhoff', weight: 4, property: networksStaySound },
 ]
 
 function assertRefusedWithPlaces(input: unknown, catalog: CatalogIndex): BuildDocument | null {
