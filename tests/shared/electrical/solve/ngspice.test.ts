@@ -1,13 +1,13 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { hasNgspice, solveWithNgspice } from '../../../helpers/ngspice.ts'
+import { solveWithNgspice } from '../../../helpers/ngspice.ts'
 import { connectedNetwork, solvePlain } from '../../../helpers/randomNetworks.ts'
 
 /** Share of the source voltage by which two solvers may differ. */
 const agreement = 1e-9
 
 /** ngspice 39 (Debian) as an independent solver: many random networks in one run. */
-describe.runIf(hasNgspice())('beside ngspice', () => {
+describe('beside ngspice', () => {
   it.each([
     ['radial', { maxNodes: 60, maxChords: 0 }],
     ['meshed', { maxNodes: 60, maxChords: 12 }],
