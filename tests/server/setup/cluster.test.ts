@@ -54,6 +54,8 @@ const occupy = (port: number) =>
 
 afterEach(async () => {
   for (const cluster of open) await cluster.stop()
+  // Without a name the folders below would be those of every cluster.
+  if (!name) return
   const place = open[0]?.place
   if (place) rmSync(place, { recursive: true })
   rmSync(join(dataFolder, name), { recursive: true, force: true })
