@@ -54,7 +54,7 @@ export function networkSolveRows(): Row[] {
     const topology = { nodes: network.nodes, from, to, held }
     const solve = () => {
       const plan = planNetwork(topology)
-      return solveNetwork(plan, evenColumns(plan, 1), ohm, held_V, draw_A)
+      return solveNetwork(plan, evenColumns(plan, 1), ohm, held_V, draw_A.slice())
     }
     const own_ms = median_ms(solve)
     if (!hasNgspice()) return { what: `network solve, ${what}`, own_ms, beside: 'ngspice is not installed' }

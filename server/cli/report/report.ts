@@ -26,7 +26,7 @@ function heading({ build }: CheckResult): string {
 }
 
 function verdict({ counts, weakestHop }: CheckResult): string {
-  const found = severities.flatMap((severity) => (counts[severity] > 0 ? [`${counts[severity]} ${severity}`] : []))
+  const found = severities.flatMap((severity) => (counts[severity] > 0 ? [counted(counts[severity], severity)] : []))
   const accepted = counts.accepted > 0 ? [`${counts.accepted} accepted`] : []
   const summary = [...found, ...accepted].join(', ')
   return [summary === '' ? 'Within the stated limits.' : `Found: ${summary}.`, weakestHop].filter(Boolean).join(' ')
