@@ -32,16 +32,23 @@ const checks = [
 let passed = 0
 let failed = 0
 
+/** @param {(typeof checks)[number]} check */
+const runCheck = ({ name, program, args }) =>
+  step(name, async () => {
+    const { code, output } = await run(program, args)
+    if (code === 0) passed++
+    else failed++
+    const what = name === 'types' ? `${args[1]}: ` : ''
+    return { outcome: code === 0 ? `${what}in order` : `${what}FAILED\n${tail(output, 60)}\n ` }
+  })
+
+/** Two at a time: each keeps one core busy. */
 const runChecks = async () => {
-  for (const { name, program, args } of checks) {
-    await step(name, async () => {
-      const { code, output } = await run(program, args)
-      if (code === 0) passed++
-      else failed++
-      const what = name === 'types' ? `${args[1]}: ` : ''
-      return { outcome: code === 0 ? `${what}in order` : `${what}FAILED\n${tail(output, 60)}\n ` }
-    })
+  const waiting = [...checks]
+  const work = async () => {
+    for (let next = waiting.shift(); next; next = waiting.shift()) await runCheck(next)
   }
+  await Promise.all([work(), work()])
 }
 
 /** @param {string} name @param {readonly string[]} args @param {string} databaseUrl */
