@@ -68,14 +68,14 @@ function groupOf(part: ResolvedPart): JointGroup {
 function matches(group: JointGroup, line: JointLine, words: readonly string[]): boolean {
   if (words.length === 0) return true
   const text = [
-    group.title.replace(' 0', ' '),
+    group.title,
     group.subtitle,
     connectorName(line.connector),
     ...line.others.map(({ other }) => connectorName(other)),
   ]
     .join(' ')
     .toLowerCase()
-  // "bay 2" is not bay 12, nor a drive of 7200 rpm.
-  const numbers = new Set(text.match(/\d+/g))
-  return words.every((word) => (/^\d+$/.test(word) ? numbers.has(word) : text.includes(word)))
+  // "bay 2" is bay 02, not bay 12, nor a drive of 7200 rpm.
+  const numbers = new Set(text.match(/\d+/g)?.map(Number))
+  return words.every((word) => (/^\d+$/.test(word) ? numbers.has(Number(word)) : text.includes(word)))
 }
