@@ -2,6 +2,7 @@ import type { Request, Response } from 'express'
 import type { BuildRole } from '#shared/contract/build.ts'
 import type { Actor } from '../policies/policy.ts'
 import type { Context } from '../services/context.ts'
+import type { KnownGuest } from '../services/guestService.ts'
 import type { SignedIn } from '../services/sessionService.ts'
 
 /** What a controller gets: who asks, and the request parsed by the route's schemas. */
@@ -11,6 +12,8 @@ export interface Call<Params = unknown, Query = unknown, Body = unknown> {
   signedIn: SignedIn | null
   /** Role of the actor in the build of the path, on routes that concern one. */
   buildRole: BuildRole | null
+  /** The guest of a link into the build of the path; null where the actor has a role in it. */
+  guest: KnownGuest | null
   params: Params
   query: Query
   body: Body

@@ -2,7 +2,7 @@ import type { CookieOptions, Request, Response } from 'express'
 import type { Config } from '../config.ts'
 import { sessionTimes_ms, type IssuedSession } from '../services/sessionService.ts'
 
-type CookieName = 'access' | 'refresh' | 'visit'
+type CookieName = 'access' | 'refresh' | 'visit' | 'guest'
 
 const isSecure = (config: Config): boolean => config.publicUrl?.startsWith('https:') === true
 
@@ -42,4 +42,13 @@ export function writeSessionCookies(config: Config, response: Response, session:
 export function clearSessionCookies(config: Config, response: Response): void {
   response.clearCookie(nameOf(config, 'access'), options(config))
   response.clearCookie(nameOf(config, 'refresh'), options(config))
+}
+
+/** Knows a guest of a link again for as long as the browser is open. */
+export function writeGuestCookie(config: Config, response: Response, token: string): void {
+  response.cookie(nameOf(config, 'guest'), token, options(config))
+}
+
+export function clearGuestCookie(config: Config, response: Response): void {
+  response.clearCookie(nameOf(config, 'guest'), options(config))
 }

@@ -1,5 +1,6 @@
 import type { Request, Response } from 'express'
 import type { Context } from '../services/context.ts'
+import { findGuest, type KnownGuest } from '../services/guestService.ts'
 import { readAccessToken, refreshSession, type SignedIn } from '../services/sessionService.ts'
 import { clearSessionCookies, readCookie, writeSessionCookies } from './cookies.ts'
 
@@ -16,4 +17,10 @@ export async function identify(context: Context, request: Request, response: Res
   if (renewed) writeSessionCookies(context.config, response, renewed)
   else if (access !== null || refresh !== null) clearSessionCookies(context.config, response)
   return renewed && { sessionId: renewed.sessionId, user: renewed.user }
+}
+
+/** The guest behind a request, where it carries the cookie that a link gave. */
+export async function identifyGuest(context: Context, request: Request): Promise<KnownGuest | null> {
+  const token = readCookie(context.config, request, 'guest')
+  return token === null ? null : findGuest(context, token)
 }

@@ -1,8 +1,10 @@
 import type { Sequelize } from 'sequelize'
 import { Build } from './Build.ts'
+import { BuildLink } from './BuildLink.ts'
 import { BuildMember } from './BuildMember.ts'
 import { BuildRevision } from './BuildRevision.ts'
 import { CatalogRevision } from './CatalogRevision.ts'
+import { Guest } from './Guest.ts'
 import { Invitation } from './Invitation.ts'
 import { Message } from './Message.ts'
 import { OwnModel } from './OwnModel.ts'
@@ -20,6 +22,8 @@ const models = [
   Build,
   BuildRevision,
   BuildMember,
+  BuildLink,
+  Guest,
   Invitation,
   CatalogRevision,
   OwnModel,
@@ -32,9 +36,11 @@ export function initModels(database: Sequelize): void {
 
 export {
   Build,
+  BuildLink,
   BuildMember,
   BuildRevision,
   CatalogRevision,
+  Guest,
   Invitation,
   Message,
   OwnModel,

@@ -1,11 +1,11 @@
 import type { Express, Request, Response } from 'express'
 import type { Answer, Call } from '../middleware/call.ts'
 import { refuseForged } from '../middleware/csrf.ts'
-import { identify } from '../middleware/identify.ts'
+import { identify, identifyGuest } from '../middleware/identify.ts'
 import { parse } from '../middleware/parse.ts'
 import { makeRateLimiter, type RateLimiter } from '../middleware/rateLimit.ts'
 import { readBody } from '../middleware/readBody.ts'
-import { concernsBuild, may, policies, type Target, type Verdict } from '../policies/policy.ts'
+import { concernsBuild, concernsGuests, may, policies, type Actor, type Verdict } from '../policies/policy.ts'
 import { findRole } from '../services/buildService.ts'
 import type { Context } from '../services/context.ts'
 import { Refusal } from '../services/refusal.ts'
@@ -36,18 +36,21 @@ async function handle(
   const signedIn = await identify(context, request, response)
   const actor = signedIn?.user ?? null
   response.locals['user'] = actor?.id
-  if (may(actor, route.policy) === 'sign-in') throw new Refusal('not-signed-in')
+  const visiting = concernsGuests(route.policy) ? await identifyGuest(context, request) : null
+  if (!visiting && may(actor, route.policy) === 'sign-in') throw new Refusal('not-signed-in')
   if (route.method !== 'get') refuseForged(context, request, signedIn)
 
   const params = readParams(route, request)
-  const target = concernsBuild(route.policy) && actor ? await findTarget(context, params, actor.id) : {}
-  refuse(may(actor, route.policy, target))
+  const buildRole = concernsBuild(route.policy) && actor ? await findRole(context, buildIdOf(params), actor.id) : null
+  const guest = buildRole === null && visiting?.buildId === buildIdOf(params) ? visiting : null
+  refuse(may(actor, route.policy, { buildRole, guest: guest?.right ?? null, self: isSelf(params, actor) }))
 
   const call: Call = {
     context,
     actor,
     signedIn,
-    buildRole: target.buildRole ?? null,
+    buildRole,
+    guest,
     params,
     query: route.query ? parse(route.query, { ...request.query }) : undefined,
     body: route.body ? parse(route.body, await readBody(request, response, route.bodyLimit ?? 'small')) : undefined,
@@ -68,10 +71,10 @@ function readParams(route: AnyRoute, request: Request): unknown {
   return parsed.data
 }
 
-async function findTarget(context: Context, params: unknown, actorId: string): Promise<Target> {
-  const { buildId, userId } = params as { buildId: string; userId?: string }
-  return { buildRole: await findRole(context, buildId, actorId), self: userId === actorId }
-}
+const buildIdOf = (params: unknown): string => (params as { buildId?: string }).buildId ?? ''
+
+const isSelf = (params: unknown, actor: Actor): boolean =>
+  actor !== null && (params as { userId?: string }).userId === actor.id
 
 function refuse(verdict: Verdict): void {
   switch (verdict) {

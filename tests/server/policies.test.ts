@@ -31,6 +31,8 @@ const comesThrough: Readonly<Record<PolicyName, readonly Visitor[]>> = {
   'signed-in': signedIn,
   'administer-installation': ['administrator'],
   'edit-catalog': ['administrator', 'catalog-editor'],
+  'see-build': ['owner', 'editor', 'reviewer', 'reader'],
+  'comment-on-build': ['owner', 'editor', 'reviewer'],
   'read-build': ['owner', 'editor', 'reviewer', 'reader'],
   'edit-build': ['owner', 'editor'],
   'own-build': ['owner'],

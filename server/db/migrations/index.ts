@@ -3,6 +3,8 @@ import { accounts } from './001-accounts.ts'
 import { builds } from './002-builds.ts'
 import { catalog } from './003-catalog.ts'
 import { demoFiles } from './004-demo-files.ts'
+import { links } from './005-links.ts'
+import { activity } from './006-activity.ts'
 
 /** Every migration in order. A migration that has shipped is never changed; add the next number. */
-export const migrations: readonly Migration[] = [accounts, builds, catalog, demoFiles]
+export const migrations: readonly Migration[] = [accounts, builds, catalog, demoFiles, links, activity]

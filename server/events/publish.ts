@@ -1,0 +1,46 @@
+import { QueryTypes, type Transaction } from 'sequelize'
+import type { Happening } from '#shared/contract/activity.ts'
+import type { Context } from '../services/context.ts'
+
+/** Who caused it: a person with an account, or a guest of a link. */
+export type Cause = { userId: string } | { guestId: string }
+
+/** The channel on which every process hears of new activity; its payload is the row's id. */
+export const activityChannel = 'bayloom_activity'
+
+/**
+ * Writes one line of a build's activity in the transaction of its cause. Once that is committed, every process tells the
+ * browsers that have the build open, and mails and notifications follow from the row; without it, nothing happens.
+ * Rows of one build are written one transaction after the other, so that their numbers follow the order of the
+ * commits and a reader who asks for "all after number n" misses none: call this last.
+ */
+export async function publish(
+  context: Pick<Context, 'database'>,
+  buildId: string,
+  cause: Cause,
+  what: Happening,
+  transaction: Transaction,
+): Promise<number> {
+  const { kind, ...details } = what
+  await context.database.query('SELECT pg_advisory_xact_lock(hashtextextended($1, 0))', {
+    bind: [`activity ${buildId}`],
+    transaction,
+  })
+  const rows = await context.database.query<{ id: string }>(
+    `INSERT INTO activity (build_id, user_id, guest_id, kind, details) VALUES ($1, $2, $3, $4, $5) RETURNING id`,
+    {
+      bind: [
+        buildId,
+        'userId' in cause ? cause.userId : null,
+        'guestId' in cause ? cause.guestId : null,
+        kind,
+        JSON.stringify(details),
+      ],
+      type: QueryTypes.SELECT,
+      transaction,
+    },
+  )
+  const id = Number(rows[0]?.id)
+  await context.database.query('SELECT pg_notify($1, $2)', { bind: [activityChannel, String(id)], transaction })
+  return id
+}
