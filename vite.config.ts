@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os'
 import vue from '@vitejs/plugin-vue'
 import { defineConfig } from 'vitest/config'
 
@@ -28,6 +29,8 @@ export default defineConfig({
   },
   test: {
     passWithNoTests: false,
+    // Vitest leaves one core free; the tests wait for databases and browsers often enough to use them all.
+    maxWorkers: availableParallelism(),
     projects: [
       {
         extends: true,
@@ -35,6 +38,8 @@ export default defineConfig({
           name: 'shared',
           include: ['tests/{shared,catalog,examples,conventions}/**/*.test.ts'],
           testTimeout: seconds(60),
+          // The core keeps nothing between calls: its files can share what they load.
+          isolate: false,
         },
       },
       {
