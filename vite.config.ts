@@ -62,7 +62,6 @@ export default defineConfig({
           name: 'journeys',
           include: ['tests/journeys/**/*.test.ts'],
           globalSetup: ['server/setup/vitestDatabase.mjs', 'server/setup/vitestClient.mjs'],
-          fileParallelism: false,
           testTimeout: seconds(180),
           hookTimeout: seconds(120),
         },
