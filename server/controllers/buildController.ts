@@ -2,7 +2,16 @@ import type { z } from 'zod'
 import type { createBuildRequestSchema, importBuildRequestSchema } from '#shared/contract/build.ts'
 import { created, ok, type Answer, type Call } from '../middleware/call.ts'
 import { listBuilds, type BuildListQuery } from '../services/buildList.ts'
-import { createBuild, duplicateBuild, importBuild, openBuild, setArchived } from '../services/buildService.ts'
+import {
+  createBuild,
+  duplicateBuild,
+  importBuild,
+  newestDocument,
+  openBuild,
+  openBuildAsGuest,
+  setArchived,
+} from '../services/buildService.ts'
+
 import { exportName } from '../files/exportName.ts'
 import { userOf } from './signedIn.ts'
 
@@ -25,7 +34,8 @@ export async function postImport(
 }
 
 export async function readBuild(call: OfBuild): Promise<Answer> {
-  return ok(await openBuild(call.context, call.params.buildId, userOf(call).id))
+  const { context, guest, params } = call
+  return ok(guest ? await openBuildAsGuest(context, guest) : await openBuild(context, params.buildId, userOf(call).id))
 }
 
 export async function exportBuild(call: OfBuild): Promise<Answer> {
@@ -39,7 +49,7 @@ export async function exportBuild(call: OfBuild): Promise<Answer> {
 
 export async function checkBuild(call: OfBuild): Promise<Answer> {
   const { context, params } = call
-  const { document } = await openBuild(context, params.buildId, userOf(call).id)
+  const document = await newestDocument(context, params.buildId)
   return ok(await context.checks.check(document, await context.catalog.current()))
 }
 

@@ -5,8 +5,10 @@ import { demoAccounts } from '../db/demoAccounts.ts'
 import { created, nothing, ok, type Answer, type Call } from '../middleware/call.ts'
 import { clearSessionCookies, writeSessionCookies } from '../middleware/cookies.ts'
 import { csrfToken } from '../middleware/csrf.ts'
+import { identifyGuest } from '../middleware/identify.ts'
 import { awaitsFirstAccount, register } from '../services/accountService.ts'
 import type { Context } from '../services/context.ts'
+import { toGuestSession } from '../services/guestService.ts'
 import { endSession, signIn, type IssuedSession, type SignedIn } from '../services/sessionService.ts'
 
 export async function readSession({ context, request, response, signedIn }: Call): Promise<Answer> {
@@ -46,8 +48,10 @@ async function toSession(
   response: Response,
   signedIn: SignedIn | null,
 ): Promise<Session> {
+  const guest = await identifyGuest(context, request)
   return {
     user: signedIn?.user ?? null,
+    guest: guest && toGuestSession(guest),
     csrfToken: csrfToken(context, request, response, signedIn),
     firstAccount: signedIn === null && (await awaitsFirstAccount()),
     demoAccounts: context.config.demo

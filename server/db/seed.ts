@@ -8,6 +8,7 @@ import { processConfig } from '../config.ts'
 import { readExamples, type ExampleFile } from '../files/exampleFiles.ts'
 import { makeContext } from '../makeContext.ts'
 import { Build, BuildMember, BuildRevision, User } from '../models/index.ts'
+import { lapseApprovals } from '../services/approvalService.ts'
 import { writeBuild } from '../services/buildService.ts'
 import { contentColumns, promptVerdict } from '../services/buildSummary.ts'
 import { contentHash } from '../services/contentHash.ts'
@@ -53,8 +54,7 @@ async function seedExample(context: Context, example: ExampleFile): Promise<void
 
 async function addDemoBuild(context: Context, exampleId: string, document: BuildDocument): Promise<void> {
   const people = demoAccounts.flatMap(({ id, buildRole }) => (buildRole === null ? [] : [{ id, buildRole }]))
-  const owner = people.find((person) => person.buildRole === 'owner')
-  if (!owner) throw new Error('the demo has no owner')
+  const owner = demoOwner()
   const id = demoBuildId(exampleId)
   await context.database.transaction(async (transaction) => {
     const label = 'Demo'
@@ -62,6 +62,12 @@ async function addDemoBuild(context: Context, exampleId: string, document: Build
     for (const person of people)
       await BuildMember.create({ buildId: id, userId: person.id, role: person.buildRole }, { transaction })
   })
+}
+
+function demoOwner() {
+  const owner = demoAccounts.find((person) => person.buildRole === 'owner')
+  if (!owner) throw new Error('the demo has no owner')
+  return owner
 }
 
 /** The example's file changed: a new revision, unless somebody has worked on the build. */
@@ -99,6 +105,8 @@ async function renewDemoBuild(context: Context, build: Build, document: BuildDoc
       },
       { transaction },
     )
+    const cause = { userId: newest.authorId ?? demoOwner().id }
+    await lapseApprovals(context, { buildId: build.id, revision, document, cause }, transaction)
   })
 }
 

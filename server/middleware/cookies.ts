@@ -44,9 +44,13 @@ export function clearSessionCookies(config: Config, response: Response): void {
   response.clearCookie(nameOf(config, 'refresh'), options(config))
 }
 
-/** Knows a guest of a link again for as long as the browser is open. */
-export function writeGuestCookie(config: Config, response: Response, token: string): void {
-  response.cookie(nameOf(config, 'guest'), token, options(config))
+/** No longer than this a browser is known as a guest without giving the name again. */
+const longestVisit_ms = 30 * 24 * 3_600_000
+
+/** Knows a guest of a link again, until the link ends: a phone forgets cookies of the open browser within the hour. */
+export function writeGuestCookie(config: Config, response: Response, token: string, until: Date): void {
+  const maxAge = Math.min(until.getTime() - Date.now(), longestVisit_ms)
+  response.cookie(nameOf(config, 'guest'), token, { ...options(config), maxAge })
 }
 
 export function clearGuestCookie(config: Config, response: Response): void {

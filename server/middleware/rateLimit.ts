@@ -1,11 +1,12 @@
 import { ipKeyGenerator, MemoryStore } from 'express-rate-limit'
 import type { Config } from '../config.ts'
 import { Refusal } from '../services/refusal.ts'
+import { hashToken } from '../services/tokens.ts'
 import type { Call } from './call.ts'
 
 interface Limit {
   /** Whom the tries are counted for. */
-  per: 'address' | 'account'
+  per: 'address' | 'account' | 'link'
   most: number
   minutes: number
   /** Count only tries that were refused. */
@@ -27,6 +28,11 @@ export const rateLimits = {
     { per: 'account', most: 5, minutes: 60 },
   ],
   'use-link': [{ per: 'address', most: 60, minutes: 15, failuresOnly: true }],
+  'open-link': [{ per: 'address', most: 120, minutes: 15 }],
+  'join-link': [
+    { per: 'address', most: 20, minutes: 15 },
+    { per: 'link', most: 60, minutes: 15 },
+  ],
   'change-password': [{ per: 'account', most: 10, minutes: 15, failuresOnly: true }],
   invite: [
     { per: 'address', most: 120, minutes: 60 },
@@ -68,10 +74,12 @@ export function makeRateLimiter(name: RateLimitName, config: Config): RateLimite
   }
 }
 
-/** An account is whoever is signed in, else the e-mail address that the request is about. */
+/** An account is whoever is signed in or came by a link, else the e-mail address that the request is about. */
 function keyOf(limit: Limit, call: Call): string {
   if (limit.per === 'address') return ipKeyGenerator(call.request.ip ?? '')
+  if (limit.per === 'link') return hashToken((call.params as { token?: string }).token ?? '')
   if (call.actor) return call.actor.id
+  if (call.guest) return call.guest.id
   const { body } = call
   return typeof body === 'object' && body !== null && 'email' in body ? String(body.email) : ''
 }

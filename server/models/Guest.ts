@@ -17,6 +17,7 @@ export class Guest extends Model<InferAttributes<Guest>, InferCreationAttributes
   declare joinedAt: CreationOptional<Date>
   declare lastSeenAt: CreationOptional<Date>
   declare closedAt: CreationOptional<Date | null>
+  declare closedBecause: CreationOptional<'left' | 'closed out' | null>
 
   static define(database: Sequelize): void {
     Guest.init(
@@ -29,6 +30,7 @@ export class Guest extends Model<InferAttributes<Guest>, InferCreationAttributes
         joinedAt: { type: DataTypes.DATE, defaultValue: DataTypes.NOW },
         lastSeenAt: { type: DataTypes.DATE, defaultValue: DataTypes.NOW },
         closedAt: DataTypes.DATE,
+        closedBecause: DataTypes.TEXT,
       },
       { sequelize: database, tableName: 'guests' },
     )

@@ -54,7 +54,7 @@ export const buildRoutes = [
   defineRoute({
     method: 'get',
     path: '/api/builds/:buildId',
-    policy: 'read-build',
+    policy: 'see-build',
     summary: 'A build with its newest document',
     params: buildParams,
     answers: { 200: openBuildSchema },
@@ -72,7 +72,7 @@ export const buildRoutes = [
   defineRoute({
     method: 'get',
     path: '/api/builds/:buildId/check',
-    policy: 'read-build',
+    policy: 'see-build',
     summary: 'What the checker says of the newest revision',
     params: buildParams,
     rateLimit: 'check',

@@ -1,4 +1,5 @@
 import { accountRoutes } from './accounts.ts'
+import { buildLinkRoutes } from './buildLinks.ts'
 import { buildRoutes } from './builds.ts'
 import { catalogRoutes } from './catalog.ts'
 import { checkRoutes } from './checks.ts'
@@ -10,6 +11,7 @@ import { openApiRoute } from './openApi.ts'
 import { ownModelRoutes } from './ownModels.ts'
 import { revisionRoutes } from './revisions.ts'
 import type { AnyRoute } from './route.ts'
+import { roundRoutes } from './rounds.ts'
 import { sessionRoutes } from './sessions.ts'
 import { userRoutes } from './users.ts'
 
@@ -23,6 +25,8 @@ const resources: readonly AnyRoute[] = [
   ...revisionRoutes,
   ...memberRoutes,
   ...invitationRoutes,
+  ...buildLinkRoutes,
+  ...roundRoutes,
   ...catalogRoutes,
   ...ownModelRoutes,
   ...checkRoutes,

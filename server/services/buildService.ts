@@ -5,14 +5,14 @@ import { readBuild } from '#shared/build/read.ts'
 import { resolve } from '#shared/build/resolve.ts'
 import type { BuildRole, BuildSummary } from '#shared/contract/build.ts'
 import { readExample } from '../files/exampleFiles.ts'
-import { Build, BuildMember, BuildRevision } from '../models/index.ts'
-import { findOpenBuild, findSummary } from './buildList.ts'
+import { Build, BuildMember, BuildRevision, Guest } from '../models/index.ts'
+import { findOpenBuild, findSummary, type OpenBuild } from './buildList.ts'
 import { contentColumns, promptVerdict } from './buildSummary.ts'
 import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
+import type { KnownGuest } from './guestService.ts'
 import { Refusal } from './refusal.ts'
-
-export type OpenBuild = BuildSummary & { document: BuildDocument }
+import { readRevision } from './revisionService.ts'
 
 /** The actor's role in a build; null: none, or no such build. */
 export async function findRole(context: Context, buildId: string, userId: string): Promise<BuildRole | null> {
@@ -24,9 +24,24 @@ export async function findRole(context: Context, buildId: string, userId: string
 }
 
 export async function openBuild(context: Context, buildId: string, userId: string): Promise<OpenBuild> {
-  const build = await findOpenBuild(context.database, buildId, userId)
+  const build = await findOpenBuild(context.database, buildId, { userId })
   if (!build) throw new Refusal('not-found')
   return build
+}
+
+/** As `openBuild`, for somebody who came by a link. Notes when they were last here. */
+export async function openBuildAsGuest(context: Context, guest: KnownGuest): Promise<OpenBuild> {
+  const build = await findOpenBuild(context.database, guest.buildId, { guest })
+  if (!build) throw new Refusal('not-found')
+  await Guest.update({ lastSeenAt: new Date() }, { where: { id: guest.id } })
+  return build
+}
+
+/** The newest document alone, whoever asks. */
+export async function newestDocument(context: Context, buildId: string): Promise<BuildDocument> {
+  const build = await Build.findByPk(buildId, { attributes: ['revision'] })
+  if (!build) throw new Refusal('not-found')
+  return (await readRevision(context, buildId, build.revision)).document
 }
 
 /** Makes a build: empty, or as a copy of an example. */

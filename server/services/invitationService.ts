@@ -3,6 +3,7 @@ import { Op, type Transaction } from 'sequelize'
 import type { z } from 'zod'
 import type { BuildRole, Invitation as InvitationView, invitationViewSchema } from '#shared/contract/build.ts'
 import type { User as UserView } from '#shared/contract/session.ts'
+import { publish } from '../events/publish.ts'
 import { invitationMail } from '../mail/templates.ts'
 import { Build, BuildMember, Invitation, User } from '../models/index.ts'
 import type { Context } from './context.ts'
@@ -22,32 +23,43 @@ export async function invite(
   const invitation = await context.database.transaction(async (transaction) => {
     const build = await Build.findByPk(buildId, { transaction, lock: transaction.LOCK.UPDATE })
     if (!build) throw new Refusal('not-found')
-    await refuseMember(buildId, request.email, transaction)
-    await Invitation.destroy({ where: { buildId, email: request.email, acceptedAt: null }, transaction })
-    const token = makeToken()
-    const made = await Invitation.create(
-      {
-        id: randomUUID(),
-        buildId,
-        ...request,
-        tokenHash: hashToken(token),
-        invitedBy: invitedBy.id,
-        expiresAt: new Date(Date.now() + lifetime_ms),
-      },
-      { transaction },
-    )
-    const mail = invitationMail({
-      buildName: build.name,
-      invitedBy: invitedBy.name,
-      role: request.role,
-      publicUrl: context.publicUrl,
-      token,
-    })
-    await queueMail(request.email, mail, transaction)
-    return made
+    return inviteWithin(context, invitedBy, build, request, transaction)
   })
   context.jobs.wake()
   return toView(invitation)
+}
+
+/** Invites within a transaction that holds the build. */
+export async function inviteWithin(
+  context: Context,
+  invitedBy: UserView,
+  build: Build,
+  request: { email: string; role: Exclude<BuildRole, 'owner'> },
+  transaction: Transaction,
+): Promise<Invitation> {
+  await refuseMember(build.id, request.email, transaction)
+  await Invitation.destroy({ where: { buildId: build.id, email: request.email, acceptedAt: null }, transaction })
+  const token = makeToken()
+  const made = await Invitation.create(
+    {
+      id: randomUUID(),
+      buildId: build.id,
+      ...request,
+      tokenHash: hashToken(token),
+      invitedBy: invitedBy.id,
+      expiresAt: new Date(Date.now() + lifetime_ms),
+    },
+    { transaction },
+  )
+  const mail = invitationMail({
+    buildName: build.name,
+    invitedBy: invitedBy.name,
+    role: request.role,
+    publicUrl: context.publicUrl,
+    token,
+  })
+  await queueMail(request.email, mail, transaction)
+  return made
 }
 
 async function refuseMember(buildId: string, email: string, transaction: Transaction): Promise<void> {
@@ -88,6 +100,7 @@ export async function acceptInvitation(context: Context, token: string, user: Us
     const member = await BuildMember.findOne({ where: { buildId, userId: user.id }, transaction })
     if (!member) await BuildMember.create({ buildId, userId: user.id, role }, { transaction })
     await invitation.update({ acceptedAt: new Date() }, { transaction })
+    if (!member) await publish(context, buildId, { userId: user.id }, { kind: 'member-joined', role }, transaction)
     return { buildId }
   })
 }

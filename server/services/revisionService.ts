@@ -9,6 +9,7 @@ import { clashes, touched } from '#shared/build/touch.ts'
 import type { CatalogIndex } from '#shared/catalog/catalog.ts'
 import type { Revision, SaveAnswer, SaveRequest } from '#shared/contract/build.ts'
 import { Build, BuildRevision } from '../models/index.ts'
+import { lapseApprovals } from './approvalService.ts'
 import { contentColumns, promptVerdict } from './buildSummary.ts'
 import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
@@ -70,6 +71,7 @@ export async function saveRevision(
       },
       { transaction },
     )
+    await lapseApprovals(context, { buildId, revision, document, cause: { userId: authorId } }, transaction)
     return { revision, savedAt: savedAt.toISOString(), merged: [...standing.since] }
   })
   context.jobs.wake()

@@ -1,6 +1,8 @@
 import { z } from 'zod'
 import { editSchema } from '../build/changes.ts'
 import { severitySchema } from '../check/severity.ts'
+import { guestSchema } from './guest.ts'
+import { reviewStateSchema } from './reviewState.ts'
 import { emailSchema, userSchema } from './session.ts'
 
 export const buildRoles = ['owner', 'editor', 'reviewer', 'reader'] as const
@@ -32,6 +34,7 @@ export const buildSummarySchema = z.object({
   archived: z.boolean(),
   role: buildRoleSchema,
   people: z.array(z.object({ name: z.string(), role: buildRoleSchema })),
+  review: reviewStateSchema.default({ approval: null, open: null }),
 })
 export type BuildSummary = z.infer<typeof buildSummarySchema>
 
@@ -51,8 +54,15 @@ export const buildListSchema = z.object({
 })
 export type BuildList = z.infer<typeof buildListSchema>
 
-/** The opened build: summary and document. The document is validated by `readBuild`, not here. */
-export const openBuildSchema = buildSummarySchema.extend({ document: z.unknown() })
+/**
+ * The opened build: summary and document. Who has no role in it is a `guest` of one of its links. The document is validated by
+ * `readBuild`, not here.
+ */
+export const openBuildSchema = buildSummarySchema.extend({
+  role: buildRoleSchema.nullable(),
+  guest: guestSchema.nullable().default(null),
+  document: z.unknown(),
+})
 
 /** POST /api/builds: empty, or from an example. */
 export const createBuildRequestSchema = z.strictObject({

@@ -1,5 +1,6 @@
-/** Paths of the client that mails link to. */
+/** Paths of the client that mails and links lead to. */
 export const clientPaths = {
   invitation: (token: string): string => `/invitations/${token}`,
   passwordReset: (token: string): string => `/password-resets/${token}`,
+  link: (token: string): string => `/links/${token}`,
 } as const

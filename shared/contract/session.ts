@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { guestSessionSchema } from './guest.ts'
 
 export const installationRoles = ['administrator', 'catalog-editor', 'member'] as const
 export const installationRoleSchema = z.enum(installationRoles)
@@ -25,6 +26,8 @@ export type User = z.infer<typeof userSchema>
 /** GET /api/session. `csrfToken` goes back in the `x-csrf-token` header of every request that changes something. */
 export const sessionSchema = z.object({
   user: userSchema.nullable(),
+  /** The guest of a link that this browser is; an account's role in the same build goes before it. */
+  guest: guestSessionSchema.nullable().default(null),
   csrfToken: z.string(),
   /** True until the first account exists: the first one becomes administrator. */
   firstAccount: z.boolean(),

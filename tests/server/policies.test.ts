@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { openBuildSchema } from '#shared/contract/build.ts'
+import { madeLinkSchema } from '#shared/contract/buildLinks.ts'
 import { createApp } from '../../server/app.ts'
 import { BuildMember } from '../../server/models/index.ts'
 import { may, policies, type PolicyName } from '../../server/policies/policy.ts'
@@ -9,7 +10,10 @@ import type { AnyRoute } from '../../server/routes/route.ts'
 import { startApi, type Api, type Client } from './support/api.ts'
 import { cablesDocument } from './support/documents.ts'
 
-/** Everybody who may come along: nobody, the installation's roles without a build, and the roles in a build. */
+/**
+ * Everybody who may come along: nobody, the installation's roles without a build, the roles in a build, and people who
+ * came by a link into this build, into another one, or by one that was revoked.
+ */
 const visitors = [
   'nobody',
   'member',
@@ -19,11 +23,17 @@ const visitors = [
   'editor',
   'reviewer',
   'reader',
+  'guest-reader',
+  'guest-reviewer',
+  'guest-elsewhere',
+  'guest-revoked',
 ] as const
 type Visitor = (typeof visitors)[number]
 
 const everybody = [...visitors]
-const signedIn = visitors.filter((visitor) => visitor !== 'nobody')
+/** Nobody of these is signed in. */
+const strangers: readonly Visitor[] = ['nobody', 'guest-reader', 'guest-reviewer', 'guest-elsewhere', 'guest-revoked']
+const signedIn = visitors.filter((visitor) => !strangers.includes(visitor))
 
 /** Who comes through each policy, written down apart from the code that decides it. */
 const comesThrough: Readonly<Record<PolicyName, readonly Visitor[]>> = {
@@ -31,8 +41,8 @@ const comesThrough: Readonly<Record<PolicyName, readonly Visitor[]>> = {
   'signed-in': signedIn,
   'administer-installation': ['administrator'],
   'edit-catalog': ['administrator', 'catalog-editor'],
-  'see-build': ['owner', 'editor', 'reviewer', 'reader'],
-  'comment-on-build': ['owner', 'editor', 'reviewer'],
+  'see-build': ['owner', 'editor', 'reviewer', 'reader', 'guest-reader', 'guest-reviewer'],
+  'comment-on-build': ['owner', 'editor', 'reviewer', 'guest-reviewer'],
   'read-build': ['owner', 'editor', 'reviewer', 'reader'],
   'edit-build': ['owner', 'editor'],
   'own-build': ['owner'],
@@ -57,12 +67,12 @@ const expectedPolicies: Readonly<Record<string, PolicyName>> = {
   'get /api/builds': 'signed-in',
   'post /api/builds': 'signed-in',
   'post /api/builds/import': 'signed-in',
-  'get /api/builds/:buildId': 'read-build',
+  'get /api/builds/:buildId': 'see-build',
   'post /api/builds/:buildId/revisions': 'edit-build',
   'get /api/builds/:buildId/revisions': 'read-build',
   'get /api/builds/:buildId/revisions/:revision': 'read-build',
   'get /api/builds/:buildId/export': 'read-build',
-  'get /api/builds/:buildId/check': 'read-build',
+  'get /api/builds/:buildId/check': 'see-build',
   'post /api/builds/:buildId/duplicate': 'read-build',
   'post /api/builds/:buildId/archive': 'own-build',
   'post /api/builds/:buildId/restore': 'own-build',
@@ -73,6 +83,18 @@ const expectedPolicies: Readonly<Record<string, PolicyName>> = {
   'delete /api/builds/:buildId/members/:userId': 'remove-member',
   'get /api/invitations/:token': 'anybody',
   'post /api/invitations/:token/accept': 'signed-in',
+  'get /api/builds/:buildId/links': 'own-build',
+  'post /api/builds/:buildId/links': 'own-build',
+  'delete /api/builds/:buildId/links/:linkId': 'own-build',
+  'delete /api/builds/:buildId/guests/:guestId': 'own-build',
+  'get /api/builds/:buildId/rounds': 'see-build',
+  'post /api/builds/:buildId/rounds': 'edit-build',
+  'put /api/builds/:buildId/rounds/:roundId/verdict': 'comment-on-build',
+  'post /api/builds/:buildId/rounds/:roundId/end': 'edit-build',
+  'put /api/builds/:buildId/review-rules': 'own-build',
+  'get /api/links/:token': 'anybody',
+  'post /api/links/:token/guests': 'anybody',
+  'delete /api/guest': 'anybody',
   'get /api/catalog': 'anybody',
   'put /api/catalog/models/:modelId': 'edit-catalog',
   'get /api/own-models': 'signed-in',
@@ -96,8 +118,23 @@ beforeAll(async () => {
   buildId = openBuildSchema.parse(made.body).id
   for (const role of ['editor', 'reviewer', 'reader'] as const)
     await BuildMember.create({ buildId, userId: clientOf(role).user?.id ?? '', role })
+  const elsewhere = await clientOf('owner').post('/api/builds/import', { document: cablesDocument('Elsewhere', 1) })
+  clients.set('guest-reader', await comeByLink(buildId, 'read'))
+  clients.set('guest-reviewer', await comeByLink(buildId, 'review'))
+  clients.set('guest-elsewhere', await comeByLink(openBuildSchema.parse(elsewhere.body).id, 'review'))
+  clients.set('guest-revoked', await comeByLink(buildId, 'review', true))
 })
 afterAll(() => api.close())
+
+/** A browser that came by a link of its own. */
+async function comeByLink(into: string, kind: 'read' | 'review', revoked = false): Promise<Client> {
+  const links = `/api/builds/${into}/links`
+  const made = madeLinkSchema.parse((await clientOf('owner').post(links, { kind, label: kind, days: 1 })).body)
+  const guest = await api.visitor()
+  expect((await guest.post(`/api/links/${made.token}/guests`, { name: 'Passer-by' })).status).toBe(201)
+  if (revoked) expect((await clientOf('owner').delete(`${links}/${made.link.id}`)).status).toBe(204)
+  return guest
+}
 
 function clientOf(visitor: Visitor): Client {
   const client = clients.get(visitor)
@@ -122,9 +159,14 @@ test('the table holds the routes that are written down here, under the same poli
   expect(named).toHaveLength(Object.keys(actual).length)
 })
 
-/** Signing out is walked last: it really ends the session. */
+/** Signing out and leaving are walked last: they really end the visit. */
 const isSignOut = (name: string) => name === 'delete /api/session'
-const walked = [...named.filter(({ name }) => !isSignOut(name)), ...named.filter(({ name }) => isSignOut(name))]
+const isLeaving = (name: string) => name === 'delete /api/guest'
+const walked = [
+  ...named.filter(({ name }) => !isSignOut(name) && !isLeaving(name)),
+  ...named.filter(({ name }) => isLeaving(name)),
+  ...named.filter(({ name }) => isSignOut(name)),
+]
 
 describe.each(walked)('$name', ({ route }) => {
   test.each(visitors)('asked by %s', async (visitor) => {
@@ -134,7 +176,9 @@ describe.each(walked)('$name', ({ route }) => {
     const mayPass = comesThrough[route.policy].includes(visitor)
     const isBuildRoute = route.path.includes(':buildId')
     if (mayPass) expect([401, 403]).not.toContain(status)
-    else if (visitor === 'nobody') expect(status).toBe(401)
+    // A guest of the build whom the link does not let do this is told so, where guests may come at all.
+    else if (visitor === 'guest-reader' && route.policy === 'comment-on-build') expect(status).toBe(403)
+    else if (strangers.includes(visitor)) expect(status).toBe(401)
     else if (isBuildRoute && (visitor === 'member' || visitor === 'catalog-editor' || visitor === 'administrator'))
       expect(status).toBe(404)
     else expect(status).toBe(403)
