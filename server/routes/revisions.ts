@@ -26,7 +26,7 @@ export const revisionRoutes = [
   defineRoute({
     method: 'get',
     path: '/api/builds/:buildId/revisions',
-    policy: 'read-build',
+    policy: 'see-build',
     summary: 'The history, newest first, 50 a page',
     params: buildParams,
     query: listRevisionsQuerySchema,
@@ -36,7 +36,7 @@ export const revisionRoutes = [
   defineRoute({
     method: 'get',
     path: '/api/builds/:buildId/revisions/:revision',
-    policy: 'read-build',
+    policy: 'see-build',
     summary: 'One revision with its document',
     params: revisionParams,
     answers: { 200: openRevisionSchema },
