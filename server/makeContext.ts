@@ -1,6 +1,7 @@
 import type { Logger } from 'pino'
 import type { Config } from './config.ts'
 import { openDatabase } from './db/connection.ts'
+import { makeLive } from './events/live.ts'
 import { checkBuilds } from './jobs/checkBuilds.ts'
 import { cleanUp } from './jobs/cleanUp.ts'
 import { makeJobLoop } from './jobs/jobLoop.ts'
@@ -45,10 +46,12 @@ export function makeContext(
       },
       log,
     ),
+    live: makeLive(config, database, log, () => context.jobs.wake()),
     async loadSecrets() {
       context.secrets = await loadSecrets(database, config.secret)
     },
     async close() {
+      await context.live.stop()
       await context.jobs.stop()
       checks.close()
       await database.close()

@@ -32,11 +32,12 @@ export async function startServer(config: Config): Promise<RunningServer> {
   const { port } = server.address() as AddressInfo
   const address = `http://${config.host.includes(':') ? `[${config.host}]` : config.host}:${port}`
   context.publicUrl = config.publicUrl ?? address
+  await context.live.start()
   context.jobs.start()
   return {
     address,
     async stop() {
-      await close(server)
+      await Promise.all([close(server), context.live.stop()])
       await context.close()
     },
   }

@@ -7,6 +7,12 @@ export type Cause = { userId: string } | { guestId: string }
 
 /** The channel on which every process hears of new activity; its payload is the row's id. */
 export const activityChannel = 'bayloom_activity'
+/** Says whose notifications changed: the person's id. */
+export const noticesChannel = 'bayloom_notices'
+/** Who has which build open, said from process to process. */
+export const presenceChannel = 'bayloom_presence'
+/** Who may have lost access: "session:…" or "build:…", said by triggers of the database. */
+export const accessChannel = 'bayloom_access'
 
 /**
  * Writes one line of a build's activity in the transaction of its cause. Once that is committed, every process tells the

@@ -26,6 +26,8 @@ export interface Answer {
   status: number
   body?: unknown
   headers?: Readonly<Record<string, string>>
+  /** Takes over a response whose status and headers are set, instead of a body. */
+  stream?: (response: Response) => Promise<void>
 }
 
 export const ok = (body: unknown): Answer => ({ status: 200, body })

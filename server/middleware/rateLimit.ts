@@ -39,6 +39,7 @@ export const rateLimits = {
     { per: 'account', most: 60, minutes: 60 },
   ],
   check: [{ per: 'account', most: 240, minutes: 1 }],
+  presence: [{ per: 'account', most: 240, minutes: 1 }],
 } as const satisfies Record<string, readonly Limit[]>
 export type RateLimitName = keyof typeof rateLimits
 

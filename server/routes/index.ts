@@ -5,6 +5,7 @@ import { catalogRoutes } from './catalog.ts'
 import { checkRoutes } from './checks.ts'
 import { healthRoutes } from './health.ts'
 import { invitationRoutes } from './invitations.ts'
+import { liveRoutes } from './live.ts'
 import { mailboxRoutes } from './mailbox.ts'
 import { memberRoutes } from './members.ts'
 import { openApiRoute } from './openApi.ts'
@@ -27,6 +28,7 @@ const resources: readonly AnyRoute[] = [
   ...invitationRoutes,
   ...buildLinkRoutes,
   ...roundRoutes,
+  ...liveRoutes,
   ...catalogRoutes,
   ...ownModelRoutes,
   ...checkRoutes,

@@ -60,7 +60,7 @@ async function handle(
   await limiter?.count(call)
   const answer = await route.controller(call)
   await limiter?.succeeded(call)
-  send(response, answer)
+  await send(response, answer)
 }
 
 /** An address whose ids cannot be ids leads nowhere. */
@@ -89,10 +89,11 @@ function refuse(verdict: Verdict): void {
   }
 }
 
-function send(response: Response, answer: Answer): void {
+async function send(response: Response, answer: Answer): Promise<void> {
   response.status(answer.status).set('Cache-Control', 'no-store')
   if (answer.headers) response.set(answer.headers)
-  if (answer.body === undefined) response.end()
+  if (answer.stream) await answer.stream(response)
+  else if (answer.body === undefined) response.end()
   else if (typeof answer.body === 'string') response.send(answer.body)
   else response.json(answer.body)
 }

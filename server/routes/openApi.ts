@@ -34,15 +34,15 @@ function operation(route: AnyRoute) {
     },
     ...(route.body ? { requestBody: { required: true, content: { 'application/json': { schema: route.body } } } } : {}),
     responses: {
-      ...Object.fromEntries(Object.entries(route.answers).map(([status, schema]) => [status, answer(schema)])),
+      ...Object.fromEntries(Object.entries(route.answers).map(([status, schema]) => [status, answer(schema, route)])),
       default: { description: 'Refused', content: { 'application/problem+json': { schema: problemSchema } } },
     },
   }
 }
 
-const answer = (schema: z.ZodType | null) => ({
+const answer = (schema: z.ZodType | null, { streams = false }: AnyRoute) => ({
   description: schema ? 'Done' : 'Done, with no body',
-  ...(schema ? { content: { 'application/json': { schema } } } : {}),
+  ...(schema ? { content: { [streams ? 'text/event-stream' : 'application/json']: { schema } } } : {}),
 })
 
 /** GET /api/openapi.json, which describes itself too. */

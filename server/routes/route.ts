@@ -22,6 +22,8 @@ export interface Route<
   body?: Body
   bodyLimit?: BodyLimit
   rateLimit?: RateLimitName
+  /** The answer is a stream of server-sent events; its schema is that of each event's data. */
+  streams?: boolean
   /** Schema of each answer, by status; null where there is no body. */
   answers: Readonly<Record<number, z.ZodType | null>>
   controller: (call: Call<z.output<Params>, z.output<Query>, z.output<Body>>) => Promise<Answer> | Answer

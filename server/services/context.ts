@@ -1,6 +1,7 @@
 import type { Logger } from 'pino'
 import type { Sequelize } from 'sequelize'
 import type { Config } from '../config.ts'
+import type { Live } from '../events/live.ts'
 import type { JobLoop } from '../jobs/jobLoop.ts'
 import type { CatalogService } from './catalogService.ts'
 import type { CheckService } from './checkService.ts'
@@ -14,6 +15,7 @@ export interface Context {
   catalog: CatalogService
   checks: CheckService
   jobs: JobLoop
+  live: Live
   log: Logger
   /** Address for links in mails, without a trailing slash. */
   publicUrl: string
