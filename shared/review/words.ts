@@ -27,12 +27,14 @@ export function approvalWords({ revision, by, lapsedRevision }: Approval): strin
 export const approvalShort = ({ revision, lapsedRevision }: Approval): string =>
   lapsedRevision === null ? `approved at revision ${revision}` : `approval of revision ${revision} lapsed`
 
-/** The state of review in the title block of a paper printed at a revision. */
+/** The state of review in the title block of a paper that shows a revision. */
 export function checkedWords(review: ReviewState | null, revision: number): string {
   const approval = review?.approval ?? null
-  if (approval === null) return review?.open ? `in review, round ${review.open.round}` : 'not reviewed'
-  if (approval.lapsedRevision === null || approval.revision === revision) return approvalShort(approval)
-  return revision >= approval.lapsedRevision ? approvalShort(approval) : `approved at revision ${approval.revision}`
+  if (approval && revision >= approval.revision)
+    return approvalShort(
+      revision < (approval.lapsedRevision ?? Infinity) ? { ...approval, lapsedRevision: null } : approval,
+    )
+  return review?.open?.revision === revision ? `in review, round ${review.open.round}` : 'not reviewed'
 }
 
 /** How a build stands with its reviewers, in few words; empty where nobody was asked. */
@@ -74,7 +76,7 @@ export function standingWords(round: Round): string {
 }
 
 const stopWords = ({ danger, fault }: { danger: number; fault: number }): string =>
-  [danger > 0 ? `${counted(danger, 'open danger')}` : '', fault > 0 ? counted(fault, 'open fault') : '']
+  [danger > 0 ? counted(danger, 'open danger') : '', fault > 0 ? counted(fault, 'open fault') : '']
     .filter(Boolean)
     .join(' and ')
 
