@@ -1,17 +1,38 @@
-/** The faces of an opened build. */
-export type Show = 'wiring' | 'ledger' | 'joints' | 'findings' | 'bays'
+import { defineAsyncComponent, type Component } from 'vue'
 
-const words: Readonly<Record<Show, string>> = {
-  wiring: 'Wiring',
-  ledger: 'Ledger',
-  joints: 'Joints',
-  findings: 'Findings',
-  bays: 'Bays',
+/**
+ * A face of an opened build. Its component is loaded when it is first shown, gets what it needs from `useOpenBuild` and
+ * the stores, and may emit `show` to lead back to the sheet. Wiring and findings have none: the view draws them.
+ */
+interface Face {
+  id: string
+  label: string
+  /** Stands in the menu of this name instead of in the row. */
+  menu?: 'Papers'
+  /** Only on a phone: elsewhere it is a panel beside the sheet. */
+  isForPhone?: true
+  component?: Component
 }
 
-const wide: readonly Show[] = ['wiring', 'ledger', 'joints', 'findings', 'bays']
-/** On a phone the lists come first: the sheet is there to look at. */
-const narrow: readonly Show[] = ['findings', 'joints', 'bays', 'ledger', 'wiring']
+/** Adding a face is one line here. */
+const faces = [
+  { id: 'wiring', label: 'Wiring' },
+  { id: 'ledger', label: 'Ledger', component: defineAsyncComponent(() => import('../ledger/PowerLedger.vue')) },
+  { id: 'joints', label: 'Joints', component: defineAsyncComponent(() => import('./JointsTable.vue')) },
+  { id: 'findings', label: 'Findings' },
+  { id: 'bays', label: 'Bays', component: defineAsyncComponent(() => import('../drives/BayList.vue')) },
+] as const satisfies readonly Face[]
 
-export const showsOf = (isNarrow: boolean): { id: Show; label: string }[] =>
-  (isNarrow ? narrow : wide).map((id) => ({ id, label: words[id] }))
+export type Show = (typeof faces)[number]['id']
+export type ShownFace = Face & { id: Show }
+
+/** On a phone the lists come first: the sheet is there to look at. */
+const firstOnPhone: readonly Show[] = ['findings', 'joints', 'bays', 'ledger', 'wiring']
+
+/** The faces in their order, for a wide window or for a phone. */
+export function showsOf(isNarrow: boolean): readonly ShownFace[] {
+  const all: readonly ShownFace[] = faces
+  if (!isNarrow) return all.filter((face) => !face.isForPhone)
+  const first = firstOnPhone.flatMap((id) => all.find((face) => face.id === id) ?? [])
+  return [...first, ...all.filter((face) => !first.includes(face))]
+}
