@@ -40,6 +40,8 @@ export function useAutosave(buildId: string) {
   let saver: Saver | null = null
   let theirs: BuildDocument | null = null
   let closed = false
+  /** Newest revision that is known to exist, and who saved it. */
+  let newest = { revision: 0, by: null as string | null }
 
   async function open(): Promise<Opened> {
     const tab = await claimTab()
@@ -130,8 +132,19 @@ export function useAutosave(buildId: string) {
     if (orphans.length > 0) await saver?.refresh()
   }
 
+  /** Somebody saved: their work comes in at once, or as soon as one's own is on its way no more. */
+  function see(revision: number, by: string | null): void {
+    if (revision > newest.revision) newest = { revision, by }
+    lookForNewer()
+  }
+
+  function lookForNewer(): void {
+    if (state.value && newest.revision > state.value.revision) void saver?.refresh()
+  }
+
   function showState(next: SaveState): void {
     state.value = next
+    if (next.kind === 'saved') queueMicrotask(lookForNewer)
     if (next.kind !== 'conflict') {
       clashes.value = []
       theirs = null
@@ -153,9 +166,9 @@ export function useAutosave(buildId: string) {
 
   function tellDropped(dropped: readonly DroppedChange[]): void {
     const [first] = dropped
-    if (first)
-      diagram.say(`Somebody else changed this build. "${first.edit}" no longer fits (${first.reason}).`, 'refusal')
-    else diagram.say('Somebody else changed this build: their changes are in.')
+    const who = newest.by ?? 'Somebody else'
+    if (first) diagram.say(`${who} changed this build. "${first.edit}" no longer fits (${first.reason}).`, 'refusal')
+    else diagram.say(`${who} changed this build: their changes are in.`)
   }
 
   const stopEdits = diagram.onEdit((edit) => saver?.add(edit))
@@ -186,6 +199,7 @@ export function useAutosave(buildId: string) {
     clashes,
     open,
     settle,
+    see,
     retry: () => saver?.flush(),
     discard: async () => {
       try {
