@@ -1,5 +1,6 @@
 import type { Model } from '../catalog/model.ts'
 import type { Quantity } from '../quantity/quantity.ts'
+import { compareFigures, type FigureDifference } from './compareFigures.ts'
 import { compareJoints, type JointDifference } from './compareJoints.ts'
 import type { AcceptedFinding, BuildDocument, Part } from './document.ts'
 import { same } from './same.ts'
@@ -24,21 +25,33 @@ export type Difference =
   | { kind: 'routes changed'; part: string; ref: string }
   | { kind: 'pin test changed'; part: string; ref: string; to: Part['pinTest'] | null }
   | { kind: 'setting changed'; path: string; from: string; to: string }
-  | { kind: 'model added' | 'model removed' | 'model changed'; model: string; name: string }
+  | { kind: 'model added' | 'model removed'; model: string; name: string }
+  /** With the figures that differ; empty where something else of the model does. */
+  | { kind: 'model changed'; model: string; name: string; figures: FigureDifference[] }
   | { kind: 'finding accepted' | 'acceptance withdrawn'; key: string; reason: string }
   | { kind: 'build renamed'; field: 'name' | 'machine'; from: string; to: string }
   | JointDifference
+
+/** What may be known beyond the documents themselves. */
+export interface CompareOptions {
+  /** Parts of which one says that they moved from one plug to another, and not the plug: drives. */
+  travels?: (part: string) => boolean
+}
 
 /**
  * What changed between two states of one build, by meaning: parts, joints, figures, places, settings. Where things are
  * drawn and in which order they are listed does not count.
  */
-export function compareBuilds(before: BuildDocument, after: BuildDocument): Difference[] {
+export function compareBuilds(
+  before: BuildDocument,
+  after: BuildDocument,
+  { travels }: CompareOptions = {},
+): Difference[] {
   return [
     ...compareNames(before, after),
     ...compareSettings(before.settings, after.settings, ''),
     ...compareParts(before, after),
-    ...compareJoints(before, after),
+    ...compareJoints(before, after, travels),
     ...compareModels(before.models, after.models),
     ...compareAccepted(before.accepted, after.accepted),
   ]
@@ -109,15 +122,19 @@ function compareModels(before: readonly Model[], after: readonly Model[]): Diffe
     ...before.filter((model) => !now.has(model.id)).map((model) => tell('model removed', model)),
     ...after.flatMap((model) => {
       const was = old.get(model.id)
-      return was === undefined ? [tell('model added', model)] : same(was, model) ? [] : [tell('model changed', model)]
+      if (was === undefined) return [tell('model added', model)]
+      return same(was, model) ? [] : [changedModel(was, model)]
     }),
   ]
 }
 
-const tell = (kind: 'model added' | 'model removed' | 'model changed', { id, name }: Model): Difference => ({
-  kind,
-  model: id,
-  name,
+const tell = (kind: 'model added' | 'model removed', { id, name }: Model): Difference => ({ kind, model: id, name })
+
+const changedModel = (was: Model, is: Model): Difference => ({
+  kind: 'model changed',
+  model: is.id,
+  name: is.name,
+  figures: compareFigures(was, is),
 })
 
 function compareAccepted(before: readonly AcceptedFinding[], after: readonly AcceptedFinding[]): Difference[] {

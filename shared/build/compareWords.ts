@@ -12,8 +12,43 @@ const fieldNames: Readonly<Record<ToldField, string>> = {
   note: 'note',
 }
 
-/** A difference in one sentence, as a reviewer reads it. `modelName` gives the name of a model by its id. */
-export function differenceWords(difference: Difference, modelName: (id: string) => string = (id) => id): string {
+const settingNames: Readonly<Record<string, string>> = {
+  tolerance: 'Voltage tolerance',
+  wireTemperature_C: 'Wire temperature (°C)',
+  derating: 'Caution above this share of a limit',
+  shortTimeAllowance: 'Short-time allowance',
+  bundleFactor: 'Share that wires in a bundle carry',
+  'spinUp.mode': 'Start of the motors',
+  'spinUp.by': 'What holds the start back',
+  'spinUp.groupSize': 'Drives in a start group',
+  'spinUp.interval_s': 'Seconds between start groups',
+  'array.needsPassThrough': 'Array needs drives passed through',
+  'array.parityDrives': 'Drives that may be lost',
+  mains_V: 'Mains (V)',
+}
+
+/** Which of the two states an end is read in. */
+export type State = 'before' | 'after'
+
+/** Names that stand in catalog and findings, not in the documents. Each falls back to the id. */
+export interface CompareNames {
+  model?: (id: string) => string
+  /** A connector as it is printed on the part, as "outlet 3"; null for the only one of its part. */
+  connector?: (end: NamedEnd, state: State) => string | null
+  /** True for parts of which one says that they moved. */
+  travels?: (part: string) => boolean
+  /** What a finding is about, by its key. */
+  finding?: (key: string) => string
+}
+
+/** A difference in one sentence, as a reviewer reads it. */
+export function differenceWords(difference: Difference, names: CompareNames = {}): string {
+  const modelName = names.model ?? ((id: string) => id)
+  const findingName = names.finding ?? ((key: string) => key)
+  const endWords = (end: NamedEnd, state: State): string => {
+    const label = names.connector ? names.connector(end, state) : end.connector
+    return label === null ? end.ref : `${end.ref} ${label}`
+  }
   switch (difference.kind) {
     case 'part added':
       return `${difference.ref} added: ${modelName(difference.model)}.`
@@ -39,15 +74,24 @@ export function differenceWords(difference: Difference, modelName: (id: string) 
         ? `${difference.ref}: pin test on record, by ${difference.to.by} on ${difference.to.on}.`
         : `${difference.ref}: pin test withdrawn.`
     case 'setting changed':
-      return changedWords(`Setting ${difference.path}`, difference.from, difference.to)
+      return changedWords(
+        settingNames[difference.path] ?? `Setting ${difference.path}`,
+        settingWords(difference.from),
+        settingWords(difference.to),
+      )
     case 'model added':
     case 'model removed':
-    case 'model changed':
       return `Own ${difference.kind}: ${difference.name}.`
+    case 'model changed': {
+      const figures = difference.figures.map(({ path, from, to }) =>
+        changedWords(path, figureWords(from), figureWords(to)).replace(/\.$/, ''),
+      )
+      return `Own model changed: ${difference.name}${figures.length === 0 ? '' : ` (${figures.join('; ')})`}.`
+    }
     case 'finding accepted':
-      return `Finding accepted (${difference.key}): ${difference.reason}`
+      return `Finding accepted (${findingName(difference.key)}): ${difference.reason}`
     case 'acceptance withdrawn':
-      return `Acceptance withdrawn (${difference.key}).`
+      return `Acceptance withdrawn (${findingName(difference.key)}).`
     case 'build renamed':
       return changedWords(
         difference.field === 'name' ? 'Name of the build' : 'Name on the machine',
@@ -55,17 +99,20 @@ export function differenceWords(difference: Difference, modelName: (id: string) 
         difference.to,
       )
     case 'joint added':
-      return `${endWords(difference.a)} joined to ${endWords(difference.b)}.`
+      return `${endWords(difference.a, 'after')} joined to ${endWords(difference.b, 'after')}.`
     case 'joint removed':
-      return `${endWords(difference.a)} taken off ${endWords(difference.b)}.`
-    case 'rewired':
-      return `${endWords(difference.at)} rewired from ${endWords(difference.from)} to ${endWords(difference.to)}.`
+      return `${endWords(difference.a, 'before')} taken off ${endWords(difference.b, 'before')}.`
+    case 'rewired': {
+      const { at, from, to } = difference
+      const verb = names.travels?.(at.part) ? 'moved' : 'rewired'
+      return `${endWords(at, 'after')} ${verb} from ${endWords(from, 'before')} to ${endWords(to, 'after')}.`
+    }
   }
 }
 
-const endWords = ({ ref, connector }: NamedEnd): string => `${ref} ${connector}`
-
 const placeWords = (place: Place | null): string => (place ? `bay ${place.slot} of ${place.case}` : 'no bay')
+
+const settingWords = (value: string): string => (value === 'true' ? 'yes' : value === 'false' ? 'no' : value)
 
 function figureWords(quantity: Quantity | null): string {
   if (!quantity) return ''

@@ -52,7 +52,7 @@ describe('what changed between two states of a build', () => {
     [
       'a setting',
       { ...base, settings: { ...base.settings, spinUp: { ...base.settings.spinUp, groupSize: 4 } } },
-      ['Setting spinUp.groupSize changed from 2 to 4.'],
+      ['Drives in a start group changed from 2 to 4.'],
     ],
     ['the name', { ...base, name: 'North room' }, ['Name of the build changed from test to North room.']],
     ['an own model', { ...base, models: [drive('own')] }, ['Own model added: own.']],
