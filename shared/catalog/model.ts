@@ -51,6 +51,9 @@ export const modelConnectorSchema = z.strictObject({
 })
 export type ModelConnector = z.infer<typeof modelConnectorSchema>
 
+/** As `from` of a conductor of a supply: the supply's own board, where the rail that feeds `to` comes out. */
+export const supplyInside = 'inside'
+
 /** A conductor between two connectors of one part: wire by AWG or area, or a plane given as a resistance. */
 export const conductorSchema = z
   .strictObject({
@@ -124,6 +127,21 @@ export const supplySchema = z.strictObject({
   powerFactor: quantitySchema.optional(),
 })
 export type Supply = z.infer<typeof supplySchema>
+
+/** A rail that a board or backplane makes from another one, as 5 V for drives from a supply that gives 12 V only. */
+export const converterSchema = z.strictObject({
+  id: localIdSchema,
+  /** Where it takes its power from. */
+  from: z.strictObject({ rail: z.enum(['12V', '5V']), connector: localIdSchema }),
+  rail: z.enum(['5V', '3.3V']),
+  /** What it feeds. An outlet further along is reached by the part's own `wiring`. */
+  feeds: z.array(localIdSchema).min(1).max(64),
+  setPoint_V: quantitySchema,
+  limit_A: quantitySchema,
+  /** 0 to 1. */
+  efficiency: quantitySchema,
+})
+export type Converter = z.infer<typeof converterSchema>
 
 /** What one rail feeds in a device, moment by moment. A start belongs to motors; a write burst to solid-state drives. */
 export const railLoadSchema = z.strictObject({
@@ -263,6 +281,7 @@ export const modelSchema = z
     wiring: z.array(conductorSchema).max(1000).default([]),
     lanes: z.array(laneRouteSchema).max(400).default([]),
     supply: supplySchema.optional(),
+    converters: z.array(converterSchema).max(8).default([]),
     /** Family of the supply-side pinout: supplies and their modular leads only work within one family. */
     pinoutFamily: z.string().min(1).max(60).optional(),
     /** How the plugs are made. Matters for adapters. */
@@ -295,7 +314,7 @@ export const modelSchema = z
       if (!known.has(id)) context.addIssue({ code: 'custom', path, message: `no connector "${id}" on this model` })
     }
     model.wiring.forEach((conductor, i) => {
-      check(conductor.from, ['wiring', i, 'from'])
+      if (!model.supply || conductor.from !== supplyInside) check(conductor.from, ['wiring', i, 'from'])
       check(conductor.to, ['wiring', i, 'to'])
     })
     model.lanes.forEach((lane, i) => {
@@ -307,6 +326,18 @@ export const modelSchema = z
     )
     model.expander?.ports.forEach((port, j) => check(port, ['expander', 'ports', j]))
     for (const [rail, id] of Object.entries(model.loadAt ?? {})) check(id, ['loadAt', rail])
+    model.converters.forEach((converter, i) => {
+      check(converter.from.connector, ['converters', i, 'from', 'connector'])
+      converter.feeds.forEach((id, j) => check(id, ['converters', i, 'feeds', j]))
+      if (converter.from.rail === converter.rail)
+        context.addIssue({ code: 'custom', path: ['converters', i, 'rail'], message: 'a converter makes another rail' })
+    })
+    if (model.supply && known.has(supplyInside))
+      context.addIssue({
+        code: 'custom',
+        path: ['connectors'],
+        message: `"${supplyInside}" stands for the supply itself and names no connector`,
+      })
     const supplyRails = new Set(model.supply?.rails.map((rail) => rail.id))
     model.connectors.forEach((connector, i) => {
       for (const [rail, id] of Object.entries(connector.feeds ?? {}))

@@ -1,6 +1,6 @@
 import { lines } from '../quantity/rails.ts'
 import type { ConnectorType } from './connectorType.ts'
-import type { Model, ModelConnector, ModelKind } from './model.ts'
+import { supplyInside, type Model, type ModelConnector, type ModelKind } from './model.ts'
 
 type Report = (path: readonly PropertyKey[], message: string) => void
 type Types = ReadonlyMap<string, ConnectorType>
@@ -12,6 +12,7 @@ export function modelProblems(model: Model, types: Types, classes: ReadonlySet<s
   checkWiring(model, types, report)
   checkLanes(model, types, report)
   checkFeeds(model, types, report)
+  checkConverters(model, types, report)
   checkBays(model, report)
   checkKind(model, report)
 }
@@ -75,7 +76,12 @@ function checkFeeds(model: Model, types: Types, report: Report): void {
     return
   }
   const railById = new Map(model.supply.rails.map((rail) => [rail.id, rail]))
-  const reached = new Set(model.wiring.flatMap((conductor) => [conductor.to]))
+  const reached = new Set(model.wiring.flatMap(({ from, to }) => (from === supplyInside ? [] : [to])))
+  model.wiring.forEach(({ from, to, line }, i) => {
+    const feeds = model.connectors.find(({ id }) => id === to)?.feeds
+    if (from === supplyInside && (line === 'return' ? !feeds : feeds?.[line] === undefined))
+      report(['wiring', i, 'to'], `a wire from the inside leads to a connector that is fed, "${to}" is not on ${line}`)
+  })
   const fed = new Set<string>()
   model.connectors.forEach((connector, i) => {
     for (const [rail, id] of Object.entries(connector.feeds ?? {})) {
@@ -96,6 +102,22 @@ function checkFeeds(model: Model, types: Types, report: Report): void {
     if (!group.limit_A && !group.limit_W) report(['supply', 'groups', i], 'a group needs a limit')
   })
   checkRising(model, report)
+}
+
+/** A converter takes from a connector that has its input, and feeds connectors that have its output. */
+function checkConverters(model: Model, types: Types, report: Report): void {
+  const has = (id: string, rail: '12V' | '5V' | '3.3V') => {
+    const connector = model.connectors.find((candidate) => candidate.id === id)
+    return connector !== undefined && contactsOf(connector, types.get(connector.type), rail) > 0
+  }
+  model.converters.forEach(({ from, rail, feeds, efficiency }, i) => {
+    const path = ['converters', i]
+    if (!has(from.connector, from.rail)) report([...path, 'from'], `"${from.connector}" has no ${from.rail} contact`)
+    feeds.forEach((id, j) => {
+      if (!has(id, rail)) report([...path, 'feeds', j], `"${id}" has no ${rail} contact`)
+    })
+    if ((efficiency.value ?? 0) > 1) report([...path, 'efficiency'], 'efficiency is a share, at most 1')
+  })
 }
 
 function checkRising(model: Model, report: Report): void {

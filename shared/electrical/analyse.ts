@@ -2,6 +2,7 @@ import type { ResolvedBuild } from '../build/resolve.ts'
 import { momentIds, type MomentId } from '../check/result.ts'
 import type { DataResult } from '../datapath/result.ts'
 import { attachLoads } from './attach.ts'
+import { convertedDraws } from './converters.ts'
 import { maySleep } from './courses.ts'
 import { CurrentReader, hasStart, isSolidState } from './deviceCurrents.ts'
 import { deviceLoads } from './deviceLoads.ts'
@@ -26,8 +27,9 @@ export function analysePower(build: ResolvedBuild, data: DataResult): PowerResul
   const network = buildNetwork(build)
   const draws = attachLoads(network, new CurrentReader(build))
   const startPlan = planStart(build, data)
-  const islands = cutIslands(network, draws, startPlan)
-  const solved = solveLines(network, draws, islands, startPlan)
+  const all = [...draws, ...convertedDraws(network, draws)]
+  const islands = cutIslands(network, all, startPlan)
+  const solved = solveLines(network, all, islands, startPlan)
   const supplies = build.parts.filter(({ model }) => model.supply)
   return {
     applies: momentsOf(build, startPlan),
@@ -38,7 +40,7 @@ export function analysePower(build: ResolvedBuild, data: DataResult): PowerResul
     startPlan,
     network,
     draws,
-    behind: indexDraws(network, draws),
+    behind: indexDraws(network, all),
     reaches: (connector, rail) => network.byLine[lineIndex[rail]]!.plan.reached[connector.index] === 1,
   }
 }

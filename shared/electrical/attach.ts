@@ -16,6 +16,8 @@ export interface Draw {
   flows: boolean
   /** The rail arrives, the return does not. */
   lacksReturn: boolean
+  /** Ampere on the return at this connector for each ampere from the rail; 1 for devices. */
+  onReturn: number
 }
 
 /**
@@ -54,6 +56,7 @@ function attach(network: PowerNetwork, part: ResolvedPart, rail: Rail, currents:
       share: total > 0 ? weights[i]! / total : 1 / places.length,
       flows: arrives && returns,
       lacksReturn: arrives && !returns,
+      onReturn: 1,
     })
   })
 }

@@ -16,14 +16,15 @@ export function branchLoads(
     const { network } = line
     const own = byBranch[l]!.fill(null)
     network.branches.forEach((branch, i) => {
-      if (branch.kind === 'feed') return
+      const wire = branch.kind === 'feed' ? branch.wire && { ...branch.wire, part: branch.source.part } : null
+      if (branch.kind === 'feed' && !wire) return
       const island = islandOf(line, i, islands)
       const current_A = branchCurrents(line, i, island)
       const range_A = branchRange(line, i, island)
       const resistance_ohm = network.new_ohm[i]!
       const about = line.about[i] === 1
-      if (branch.kind === 'wire') {
-        const { part, conductor, index, figures } = branch
+      if (branch.kind !== 'contact') {
+        const { part, conductor, index, figures } = branch.kind === 'wire' ? branch : wire!
         const { limit } = figures
         const load: ConductorLoad = {
           branch: i,

@@ -105,8 +105,7 @@ function dropOnTheWay(line: SolvedLine, way: readonly number[], node: number, co
   const path = ends ? way : pathToSource(network, columns, stated, node, column)
   const drop = { wire: 0, contact: 0 }
   for (const branch of path) {
-    const { kind } = branches[branch]!
-    if (kind === 'feed') continue
+    const kind = branches[branch]!.kind === 'contact' ? 'contact' : 'wire'
     drop[kind] += Math.abs(stated.current_A[columns.branch[branch]! + column]!) * network.new_ohm[branch]!
   }
   return drop

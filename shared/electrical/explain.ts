@@ -234,14 +234,14 @@ function hopsTo(power: PowerResult, line: Line, branch: number, moment: MomentId
       kind: 'source',
       name,
       subject: source.rail ? railSubject(source.part, source.rail.id) : connectorSubject(first.connector),
-      current_A: way.length > 1 ? currentOf(power.byBranch[at]![way[1]!], m) : 0,
+      current_A: currentOf(power.byBranch[at]![way[0]!] ?? power.byBranch[at]![way[1] ?? -1], m),
       resistance_ohm: 0,
       drop_V: 0,
       voltage_V: volts,
       limit_A: source.rail ? (source.rail.limit_A.value ?? null) : null,
     },
   ]
-  for (const each of way.slice(1)) {
+  for (const each of way) {
     const load = power.byBranch[at]![each]
     if (!load) continue
     const current_A = currentOf(load, m)

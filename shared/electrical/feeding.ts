@@ -53,5 +53,14 @@ export const isFedFromOutside = (power: PowerResult, connector: ResolvedConnecto
     return above !== null && above.part !== connector.part
   })
 
+/** The supplies that a rail at a connector comes from in the end, through converters where there are some. */
+export function suppliesBehind(power: PowerResult, connector: ResolvedConnector, rail: Rail): Set<ResolvedPart> {
+  const found = new Set<ResolvedPart>()
+  for (const { part, takes } of power.network.byLine[lineIndex[rail]]!.sourcesOf(connector.index))
+    if (!takes) found.add(part)
+    else for (const supply of suppliesBehind(power, takes.connector, takes.rail)) found.add(supply)
+  return found
+}
+
 /** Supplies of a build. */
 export const suppliesOf = (build: ResolvedBuild): ResolvedPart[] => build.parts.filter(({ model }) => model.supply)

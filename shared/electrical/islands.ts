@@ -90,7 +90,7 @@ export function fillDraws(
 ): void {
   const onReturn = drawn[returnIndex]!
   for (const { draws, first, times } of islands.all)
-    for (const { part, connector, rail, currents, share } of draws) {
+    for (const { part, connector, rail, currents, share, onReturn: returned } of draws) {
       const line = lineIndex[rail]
       const onRail = drawn[line]!
       const railAt = columns[line]!.node[connector.index]!
@@ -103,7 +103,7 @@ export function fillDraws(
           while (segment + 1 < course.length && course[segment + 1]!.from <= steps[step]!) segment++
           const ampere = currents.inState[course[segment]!.state][scenario] * share
           onRail[railAt + first[m]! + step]! += ampere
-          onReturn[returnAt + first[m]! + step]! += ampere
+          onReturn[returnAt + first[m]! + step]! += ampere * returned
         }
       }
     }

@@ -1,13 +1,13 @@
 import type { ResolvedBuild, ResolvedConnector, ResolvedJoint, ResolvedPart } from '../build/resolve.ts'
-import type { Conductor, SupplyRail } from '../catalog/model.ts'
-import { lines, nominal_V, type Line } from '../quantity/rails.ts'
+import { supplyInside, type Conductor, type Converter, type SupplyRail } from '../catalog/model.ts'
+import { lines, nominal_V, type Line, type Rail } from '../quantity/rails.ts'
 import { readConductor, type ConductorFigures } from './conductors.ts'
 import { ContactReader, type ContactFigures } from './contacts.ts'
 import { Clusters, planNetwork, type Plan } from './solve/plan.ts'
 
 /**
- * A place that keeps its voltage: an output rail of a supply, or its return. Returns of all supplies stand at zero,
- * since they are bonded to the case.
+ * A place that keeps its voltage: an output rail of a supply or converter, or a supply's return. Returns of all
+ * supplies stand at zero, since they are bonded to the case.
  */
 export interface Source {
   node: number
@@ -16,16 +16,31 @@ export interface Source {
   rail: SupplyRail | null
   /** Set point against the rail's nominal voltage, so that the sums work on small numbers. */
   above_V: number
+  /** Where a converter takes from what it gives here. */
+  takes?: ConverterInput
+}
+
+/** The input of a converter, and what it takes there for each ampere that it gives. */
+export interface ConverterInput {
+  rail: Rail
+  connector: ResolvedConnector
+  ampere: number
 }
 
 /** What a branch stands for. */
 export type Branch =
-  /** From a supply's output to the connector it feeds, without resistance. */
-  | { kind: 'feed'; source: Source; connector: ResolvedConnector }
+  /** From an output to the connector it feeds; along the first stretch of a captive lead where its wire is given. */
+  | { kind: 'feed'; source: Source; connector: ResolvedConnector; wire: FeedWire | null }
   /** From end a to end b of a joint. */
   | { kind: 'contact'; joint: ResolvedJoint; contacts: number; figures: ContactFigures }
   /** Along a conductor's `from` to `to`. `index` is its place in the model's `wiring`. */
   | { kind: 'wire'; part: ResolvedPart; conductor: Conductor; index: number; figures: ConductorFigures }
+
+export interface FeedWire {
+  conductor: Conductor
+  index: number
+  figures: ConductorFigures
+}
 
 /** All branches of one line. Nodes are connector indices, then the sources of the line. */
 export interface LineNetwork {
@@ -56,7 +71,9 @@ export interface PowerNetwork {
  *
  * Conventions for models:
  * - A supply's connector names in `feeds` which rail feeds it. An outlet further along a captive lead names the same
- *   rail and is reached by the supply's own `wiring` from the outlet before it.
+ *   rail and is reached by the supply's own `wiring` from the outlet before it. Wiring from `inside` is the stretch
+ *   from the supply's board to the first connector.
+ * - A converter's rail stands up where what it is made from arrives.
  * - With `toleranceAt: 'lead-end'` a supply's own wiring drops no voltage, but its currents count.
  * - `wiring` runs from inlets to outlets: `supply` to `out-1` to `out-2`, `power-1` to `bay-1`, `main` to `slot-1`.
  */
@@ -73,12 +90,71 @@ export function buildNetwork(build: ResolvedBuild): PowerNetwork {
     aged: [],
   }))
 
-  for (const part of build.parts) {
-    if (part.model.supply) addSources(drafts, part, build.connectors.length)
-    addWiring(drafts, part, conductors, build)
+  const readWire = (conductor: Conductor): ConductorFigures => {
+    let figures = conductors.get(conductor)
+    if (!figures) conductors.set(conductor, (figures = readConductor(conductor, build.settings)))
+    return figures
   }
-  for (const joint of build.joints) if (joint.mating.power) addContacts(drafts, joint, contacts)
-  return { build, byLine: drafts.map((draft) => finish(draft, build.connectors.length)) }
+  for (const part of build.parts) {
+    if (part.model.supply) addSources(drafts, part, build.connectors.length, readWire)
+    addWiring(drafts, part, readWire)
+  }
+  const joined = new Set<string>()
+  for (const joint of build.joints) {
+    const ends = `${Math.min(joint.a.index, joint.b.index)} ${Math.max(joint.a.index, joint.b.index)}`
+    // Drawing a joint twice does not make a second plug: it must not halve the current.
+    if (!joint.mating.power || joined.has(ends)) continue
+    joined.add(ends)
+    addContacts(drafts, joint, contacts)
+  }
+  return { build, byLine: finishAll(drafts, build) }
+}
+
+/** Lines stand from the highest rail down: when a converter's output is laid, its input is known to be live or not. */
+function finishAll(drafts: readonly Draft[], build: ResolvedBuild): LineNetwork[] {
+  const converting = build.parts.filter(({ model }) => model.converters.length > 0)
+  const finished: LineNetwork[] = []
+  for (const draft of drafts) {
+    for (const part of converting)
+      for (const converter of part.model.converters)
+        if (converter.rail === draft.line) addConverter(draft, part, converter, finished, build.connectors.length)
+    finished.push(finish(draft, build.connectors.length))
+  }
+  return finished
+}
+
+/** Share of its input that a converter hands on where nobody states it, at most: common practice for small ones. */
+const worstEfficiency = 0.8
+
+function addConverter(
+  draft: Draft,
+  part: ResolvedPart,
+  { id, from, rail, feeds, setPoint_V, limit_A, efficiency }: Converter,
+  above: readonly LineNetwork[],
+  firstFree: number,
+): void {
+  const connector = part.connectorById.get(from.connector)
+  const input = above[lines.indexOf(from.rail)]
+  if (!connector || input?.plan.reached[connector.index] !== 1) return
+  const made: SupplyRail = { id, rail, setPoint_V, limit_A }
+  const kept = efficiency.value ?? efficiency.low ?? worstEfficiency
+  const source: Source = {
+    node: firstFree + draft.sources.length,
+    part,
+    rail: made,
+    above_V: aboveNominal_V(made),
+    takes: {
+      rail: from.rail,
+      connector,
+      ampere: nominal_V[rail] / (nominal_V[from.rail] * (kept > 0 && kept <= 1 ? kept : worstEfficiency)),
+    },
+  }
+  draft.sources.push(source)
+  for (const fed of feeds) {
+    const outlet = part.connectorById.get(fed)
+    if (outlet && outlet.contacts[rail] > 0)
+      add(draft, { kind: 'feed', source, connector: outlet, wire: null }, source.node, outlet.index, 0, 0)
+  }
 }
 
 interface Draft {
@@ -100,9 +176,21 @@ function add(draft: Draft, branch: Branch, from: number, to: number, fresh_ohm: 
 }
 
 /** One source a rail and one for the return, each feeding the connectors that the supply's own wires do not reach. */
-function addSources(drafts: readonly Draft[], part: ResolvedPart, firstFree: number): void {
+function addSources(
+  drafts: readonly Draft[],
+  part: ResolvedPart,
+  firstFree: number,
+  readWire: (conductor: Conductor) => ConductorFigures,
+): void {
   const supply = part.model.supply!
-  const reachedByWire = new Set(part.model.wiring.map(({ line, to }) => `${line}|${to}`))
+  const reachedByWire = new Set<string>()
+  const firstWires = new Map<string, FeedWire[]>()
+  part.model.wiring.forEach((conductor, index) => {
+    const end = `${conductor.line}|${conductor.to}`
+    if (conductor.from !== supplyInside) return reachedByWire.add(end)
+    const wire = { conductor, index, figures: readWire(conductor) }
+    firstWires.set(end, [...(firstWires.get(end) ?? []), wire])
+  })
   for (const draft of drafts) {
     const { line } = draft
     const made = new Map<string, Source>()
@@ -118,7 +206,10 @@ function addSources(drafts: readonly Draft[], part: ResolvedPart, firstFree: num
         draft.sources.push(source)
         made.set(railId, source)
       }
-      add(draft, { kind: 'feed', source, connector }, source.node, connector.index, 0, 0)
+      for (const wire of firstWires.get(`${line}|${connector.connector.id}`) ?? [null]) {
+        const ohm = wire && supply.toleranceAt === 'socket' ? wire.figures.resistance_ohm : 0
+        add(draft, { kind: 'feed', source, connector, wire }, source.node, connector.index, ohm, ohm)
+      }
     }
   }
 }
@@ -132,16 +223,14 @@ function aboveNominal_V(rail: SupplyRail | null): number {
 function addWiring(
   drafts: readonly Draft[],
   part: ResolvedPart,
-  known: Map<Conductor, ConductorFigures>,
-  build: ResolvedBuild,
+  readWire: (conductor: Conductor) => ConductorFigures,
 ): void {
   const atLeadEnd = part.model.supply?.toleranceAt === 'lead-end'
   part.model.wiring.forEach((conductor, index) => {
     const from = part.connectorById.get(conductor.from)
     const to = part.connectorById.get(conductor.to)
     if (!from || !to) return
-    let figures = known.get(conductor)
-    if (!figures) known.set(conductor, (figures = readConductor(conductor, build.settings)))
+    const figures = readWire(conductor)
     const ohm = atLeadEnd ? 0 : figures.resistance_ohm
     const draft = drafts[lines.indexOf(conductor.line)]!
     add(draft, { kind: 'wire', part, conductor, index, figures }, from.index, to.index, ohm, ohm)

@@ -27,10 +27,7 @@ export function findRelief(
   moment: MomentId,
   excess_A: number,
 ): Relief {
-  const loads = draws
-    .filter((draw) => draw.rail === rail && draw.part.model.kind === 'drive')
-    .map((draw) => ({ draw, load_A: busiest(power, draw, moment).value * draw.share }))
-    .sort((a, b) => b.load_A - a.load_A)
+  const loads = loadsByDrive(power, draws, rail, moment)
   let move = 0
   for (let left = excess_A; left > 1e-9 && move < loads.length; move++) left -= loads[move]!.load_A
   const first = loads[0]
@@ -42,6 +39,19 @@ export function findRelief(
     of: loads.length,
     first: { part: first.draw.part, from: outlet, to: spare.connector, left_A: spare.left_A },
   }
+}
+
+/** What each drive puts on the hop, heaviest first, at the place where it draws. */
+function loadsByDrive(power: PowerResult, draws: readonly Draw[], rail: Rail, moment: MomentId) {
+  const byDrive = new Map<ResolvedPart, { draw: Draw; load_A: number }>()
+  for (const draw of draws) {
+    if (draw.rail !== rail || draw.part.model.kind !== 'drive') continue
+    const load_A = busiest(power, draw, moment).value * draw.share
+    const known = byDrive.get(draw.part)
+    if (known) known.load_A += load_A
+    else byDrive.set(draw.part, { draw, load_A })
+  }
+  return [...byDrive.values()].sort((a, b) => b.load_A - a.load_A)
 }
 
 /** The connector that feeds a device at the place where it draws. */

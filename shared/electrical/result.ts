@@ -134,13 +134,16 @@ export interface PowerResult {
   devices: readonly DeviceLoad[]
   problems: readonly NetworkProblem[]
   timeline: readonly StageStep[]
-  /** For each line, in the order of `lines`, the load of each branch of its network; null for feeds. */
+  /** For each line, in the order of `lines`, the load of each branch of its network; null for feeds without a wire. */
   byBranch: readonly (readonly (ContactLoad | ConductorLoad | null)[])[]
   startPlan: StartPlan
   network: PowerNetwork
   /** Every place where a device takes current, whether or not it flows. In the order of `devices`. */
   draws: readonly Draw[]
-  /** The draws whose current a branch of a line carries; for a branch of a loop, all that hang on the loop. */
+  /**
+   * The draws whose current a branch of a line carries; for a branch of a loop, all that hang on the loop. What a
+   * converter takes for a device behind it stands there as a draw of that device at the converter's input.
+   */
   behind(line: Line, branch: number): readonly Draw[]
   /** A supply rail reaches this connector. */
   reaches(connector: ResolvedConnector, rail: Rail): boolean

@@ -15,7 +15,7 @@ export interface SupplyLoads {
   timeline: StageStep[]
 }
 
-/** One rail of one supply, and whether what it delivers rests on an unknown or guessed figure. */
+/** One rail of one supply or converter, and whether what it delivers rests on an unknown or guessed figure. */
 interface Output {
   part: ResolvedPart
   rail: SupplyRail
@@ -68,9 +68,14 @@ export function addUpSupplies(
   islands: Islands,
   plan: StartPlan,
 ): SupplyLoads {
-  const outputs = supplies.flatMap((part) =>
-    part.model.supply!.rails.map((rail): Output => ({ part, rail, about: false })),
-  )
+  const outputs = [
+    ...supplies.flatMap((part) => part.model.supply!.rails.map((rail): Output => ({ part, rail, about: false }))),
+    ...solved.flatMap(({ network }) =>
+      network.sources.flatMap(({ part, rail, takes }): Output[] =>
+        takes ? [{ part, rail: rail!, about: false }] : [],
+      ),
+    ),
+  ]
   const outlets = outletsOf(solved, islands, outputs)
   const volts = outputs.map(({ rail }) => rail.setPoint_V.value ?? nominal_V[rail.rail])
   const meters: Meter[] = []

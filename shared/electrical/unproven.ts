@@ -11,6 +11,7 @@ import { lineName } from './lines.ts'
 import { conductorName, contactName, railName } from './names.ts'
 import type { ContactLoad, ConductorLoad, LoadRange, PerMoment, PowerResult } from './result.ts'
 import { allowedVoltage, isStart } from './tolerance.ts'
+import { unsureWires, voltageAtLeast } from './unsureWay.ts'
 
 /** A hop whose verdict would turn within the range of the figure it rests on most. */
 export interface UnprovenHop extends Turn {
@@ -34,7 +35,7 @@ interface Context {
 /** All hops whose verdict is not settled by the figures at hand. */
 export function unprovenHops({ power, build }: Context): UnprovenHop[] {
   const { shortTimeAllowance } = build.settings
-  const found = [...ofSupplies(power), ...ofVoltages(power, build)]
+  const found = [...ofSupplies(power), ...ofVoltages(power, build), ...ofLengths(power, build)]
   for (const contact of power.contacts) found.push(...ofContact(power, contact, shortTimeAllowance))
   for (const wire of power.conductors) found.push(...ofWire(power, wire, shortTimeAllowance))
   return found
@@ -151,6 +152,36 @@ function ofVoltages(power: PowerResult, build: ResolvedBuild): UnprovenHop[] {
         figure: byLoad.figure,
       },
     ]
+  })
+}
+
+/** Devices that see too little only because a length on their way is not known. */
+function ofLengths(power: PowerResult, build: ResolvedBuild): UnprovenHop[] {
+  return power.devices.flatMap((device): UnprovenHop[] => {
+    if (device.fedBy.length === 0) return none
+    const short = momentIds.filter(
+      (moment, m) =>
+        power.applies.has(moment) && device.voltage_V[m]! < allowedVoltage(device, moment, build.settings).lowest_V,
+    )
+    const wires = short.length > 0 ? unsureWires(power, device) : []
+    const [moment] = short
+    const longest = wires[0]
+    if (!moment || !longest) return none
+    const turns = short.every(
+      (each) => voltageAtLeast(device, wires, each) >= allowedVoltage(device, each, build.settings).lowest_V,
+    )
+    return turns
+      ? [
+          {
+            name: `${device.part.part.ref} on ${lineName[device.rail]}`,
+            subject: connectorSubject(device.connector),
+            turns: 'to-within',
+            moment,
+            share: 0,
+            figure: longest.figure,
+          },
+        ]
+      : none
   })
 }
 

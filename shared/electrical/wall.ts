@@ -12,11 +12,14 @@ export interface WallLoad {
 const worstPowerFactor = 0.9
 const hoursPerYear = 24 * 365
 
+/** Nothing gives more than it takes: an efficiency or power factor outside 0 to 1 counts as not stated. */
+const isShare = (value: number | undefined): value is number => value !== undefined && value > 0 && value <= 1
+
 /** Efficiency at a share of the rated watts, between the points of the supply's curve; null without a curve. */
 export function efficiencyAt(supply: Supply, share: number): number | null {
   const points = supply.efficiency.flatMap(({ share: at, efficiency }) => {
     const value = efficiency.value ?? efficiency.low
-    return value === undefined || value <= 0 ? [] : [{ at, value }]
+    return isShare(value) ? [{ at, value }] : []
   })
   const first = points[0]
   const last = points.at(-1)
@@ -48,7 +51,8 @@ export function wallLoad(power: PowerResult, moment: MomentId): WallLoad | null 
     const efficiency = rated_W ? efficiencyAt(supply, load / rated_W) : null
     if (efficiency === null) return null
     watts += load / efficiency
-    voltAmperes += load / efficiency / (supply.powerFactor?.value ?? supply.powerFactor?.low ?? worstPowerFactor)
+    const powerFactor = supply.powerFactor?.value ?? supply.powerFactor?.low
+    voltAmperes += load / efficiency / (isShare(powerFactor) ? powerFactor : worstPowerFactor)
   }
   return { watts, voltAmperes }
 }

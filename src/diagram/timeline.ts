@@ -1,7 +1,7 @@
 import type { ResolvedBuild } from '#shared/build/resolve.ts'
 import type { TimelineStep } from '#shared/check/result.ts'
 
-/** One supply rail's current over the seconds of a staged start. */
+/** One supply or converter rail's current over the seconds of a staged start. */
 export interface RailCourse {
   name: string
   limit_A: number | null
@@ -15,7 +15,8 @@ export function railCourses(steps: readonly TimelineStep[], build: ResolvedBuild
     for (const { part, rail, current_A } of step.rails) {
       const key = `${part}/${rail}`
       const supply = build.partById.get(part)
-      const limit = supply?.model.supply?.rails.find((one) => one.id === rail)?.limit_A
+      const made = [...(supply?.model.supply?.rails ?? []), ...(supply?.model.converters ?? [])]
+      const limit = made.find((one) => one.id === rail)?.limit_A
       const course = courses.get(key) ?? {
         name: `${supply?.part.ref ?? part} ${rail.replace(/V(?=\d|$)/, ' V ').trim()}`,
         limit_A: limit?.value ?? limit?.low ?? null,

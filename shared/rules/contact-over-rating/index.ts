@@ -4,11 +4,13 @@ import { counted, placeOf } from '../../check/words.ts'
 import type { Rail } from '../../quantity/rails.ts'
 import type { Draw } from '../../electrical/attach.ts'
 import { loadFigures } from '../../electrical/evidence.ts'
+import { exceeds } from '../../electrical/figures.ts'
+import { hopRemedy } from '../../electrical/hopRemedy.ts'
 import { isWorse, judgeHeat, type Verdict } from '../../electrical/judge.ts'
 import { lineName } from '../../electrical/lines.ts'
 import { feeds, gravity, loadOfLimit } from '../../electrical/loadWords.ts'
 import { atMoment } from '../../electrical/names.ts'
-import { findRelief, reliefWords, type Relief } from '../../electrical/relief.ts'
+import { findRelief, type Relief } from '../../electrical/relief.ts'
 import type { ContactLoad } from '../../electrical/result.ts'
 import { defineRule, type RawFinding, type RuleContext } from '../rule.ts'
 
@@ -37,7 +39,7 @@ export const contactOverRating = defineRule<Facts>({
     for (const contact of context.power.contacts) {
       if (contact.limit_A === null) continue
       const verdict = judgeHeat(context.power, contact.current_A, contact.limit_A, context.build.settings)
-      if (!verdict) continue
+      if (!verdict || isWithinSlot(contact, verdict)) continue
       const others = byJoint.get(contact.joint)
       if (others) others.push({ contact, verdict })
       else byJoint.set(contact.joint, [{ contact, verdict }])
@@ -52,17 +54,23 @@ export const contactOverRating = defineRule<Facts>({
       alsoOver.length > 0
         ? ` The same plug is short of room on ${alsoOver.map((line) => lineName[line]).join(' and ')}.`
         : ''
-    const move = reliefWords(relief, contact.weaker)
     return {
       message:
         `${place} carries ${loadOfLimit(load, limit, 'A', about ?? false)} on ${lineName[contact.line]} ${atMoment(moment)}` +
         ` through ${counted(contact.contacts, 'contact')}: ${gravity(severity, moment, load, limit, build.settings.shortTimeAllowance)}.` +
         feeds(draws) +
         also,
-      remedy: move || `Put less behind ${place}, or use a connector with more or stronger contacts.`,
+      remedy: hopRemedy(
+        { owner: contact.weaker.part, at: contact.weaker, draws, relief, moment },
+        `Put less behind ${place}, or use a connector with more or stronger contacts.`,
+      ),
     }
   },
 })
+
+/** A card or module in its slot and within the limit: the slot's standard gives it all of that, and nothing can be moved. */
+const isWithinSlot = ({ joint }: ContactLoad, { load, limit }: Verdict): boolean =>
+  [joint.a, joint.b].some(({ type }) => type.side === 'edge') && !exceeds(load, limit)
 
 function toFinding(
   { power }: RuleContext,

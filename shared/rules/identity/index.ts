@@ -31,12 +31,11 @@ export const identity = defineRule<Facts>({
         remedy: 'Read the labels again and correct the one that is wrong.',
       }
     const { drives, all } = facts
-    const whose =
-      drives.length === all
-        ? `None of the ${counted(all, 'drive')} has`
-        : `${refsOf(drives)} ${drives.length === 1 ? 'has' : 'have'}`
     return {
-      message: drives.length === all ? `${whose} a serial on the plan.` : `${whose} no serial on the plan.`,
+      message:
+        drives.length === all && all > 1
+          ? `None of the ${counted(all, 'drive')} has a serial on the plan.`
+          : `${refsOf(drives)} ${drives.length === 1 ? 'has' : 'have'} no serial on the plan.`,
       remedy: 'Take the serials over from the labels, or paste what smartctl or lsblk says.',
     }
   },

@@ -63,7 +63,7 @@ export const startControlIdle = defineRule<Facts>({
       case 'expander':
         return {
           message: `${start}: ${nameOf(culprit)} does not stage the start by ${meansName[by]}.`,
-          remedy: `Use a ${reason} that passes it on, ${otherwise}`,
+          remedy: `Use ${reason === 'expander' ? 'an expander' : 'a controller'} that passes it on, ${otherwise}`,
         }
       case 'contact-grounded':
         return {

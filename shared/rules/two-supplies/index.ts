@@ -1,7 +1,7 @@
 import type { ResolvedPart } from '../../build/resolve.ts'
 import { partSubject } from '../../check/subjects.ts'
 import { counted, refsOf } from '../../check/words.ts'
-import { suppliesOf } from '../../electrical/feeding.ts'
+import { suppliesBehind, suppliesOf } from '../../electrical/feeding.ts'
 import { defineRule } from '../rule.ts'
 
 interface Facts {
@@ -28,7 +28,8 @@ export const twoSupplies = defineRule<Facts>({
     for (const device of power.devices)
       if (device.part.model.kind === 'drive') {
         const known = feeders.get(device.part) ?? new Set<ResolvedPart>()
-        for (const { part } of device.fedBy) known.add(part)
+        if (device.fedBy.length > 0)
+          for (const supply of suppliesBehind(power, device.connector, device.rail)) known.add(supply)
         feeders.set(device.part, known)
       }
     const drivesOf = (supply: ResolvedPart) => [...feeders].filter(([, fed]) => fed.has(supply)).map(([drive]) => drive)

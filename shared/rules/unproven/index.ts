@@ -93,5 +93,6 @@ function measurementFor({ what, unit }: Figure): string {
     return "Read the rating off the maker's sheet of this connector or wire, and state it on the part."
   if (unit === 'W' || what.startsWith('limit'))
     return 'Read the limit off the label of the supply, and state it on the part.'
+  if (what.startsWith('length of')) return 'Measure the lead and state its length on the part.'
   return "Take the figure from the maker's sheet, and state it on the part."
 }

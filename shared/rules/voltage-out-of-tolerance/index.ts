@@ -7,6 +7,7 @@ import { lineName } from '../../electrical/lines.ts'
 import { twoVolts } from '../../electrical/loadWords.ts'
 import { atMoment } from '../../electrical/names.ts'
 import type { DeviceLoad, PowerResult } from '../../electrical/result.ts'
+import { unsureWires } from '../../electrical/unsureWay.ts'
 import { allowedVoltage, toleranceFigure } from '../../electrical/tolerance.ts'
 import type { Settings } from '../../build/document.ts'
 import { defineRule } from '../rule.ts'
@@ -47,6 +48,7 @@ export const voltageOutOfTolerance = defineRule<Facts>({
       if (!worst) return []
       const { severity, ...facts } = worst
       const figure = toleranceFigure(device, facts.moment, build.settings)
+      const unsure = unsureWires(power, device)
       return [
         {
           severity,
@@ -56,8 +58,12 @@ export const voltageOutOfTolerance = defineRule<Facts>({
           load: facts.seen_V,
           limit: facts.allowed_V,
           unit: 'V' as const,
-          decidedBy: [figure, ...currentFigure(device, facts.moment)],
-          about: device.about,
+          decidedBy: [
+            figure,
+            ...currentFigure(device, facts.moment),
+            ...unsure.slice(0, 3).map(({ figure: length }) => length),
+          ],
+          about: device.about || unsure.length > 0,
           facts: { device, ...facts, figure },
         },
       ]

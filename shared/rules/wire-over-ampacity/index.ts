@@ -3,6 +3,7 @@ import { conductorSubject, partSubject } from '../../check/subjects.ts'
 import type { Draw } from '../../electrical/attach.ts'
 import { gaugeOf } from '../../electrical/conductors.ts'
 import { loadFigures } from '../../electrical/evidence.ts'
+import { hopRemedy } from '../../electrical/hopRemedy.ts'
 import { isWorse, judgeHeat, type Verdict } from '../../electrical/judge.ts'
 import { feeds, gravity, loadOfLimit } from '../../electrical/loadWords.ts'
 import { atMoment, conductorName } from '../../electrical/names.ts'
@@ -54,10 +55,18 @@ export const wireOverAmpacity = defineRule<Facts>({
         ` ${atMoment(moment)}: ${gravity(severity, moment, load, limit, build.settings.shortTimeAllowance)}.` +
         feeds(draws) +
         more,
-      remedy: `Replace ${conductor.part.part.ref} with one of thicker wire, or feed fewer devices through it.`,
+      remedy: hopRemedy(
+        { owner: conductor.part, at: farEnd(conductor), draws, relief: noRelief, moment },
+        `Replace ${conductor.part.part.ref} with one of thicker wire, or feed fewer devices through it.`,
+      ),
     }
   },
 })
+
+/** Thicker wire is the first thing to think of, not which device to move. */
+const noRelief = { move: 0, of: 0 }
+
+const farEnd = ({ part, conductor }: ConductorLoad) => part.connectorById.get(conductor.to) ?? part.connectors[0]!
 
 function toFinding({ power }: RuleContext, found: readonly Found[]): RawFinding<Facts> {
   const worst = found.reduce((most, entry) => (isWorse(entry.verdict, most.verdict) ? entry : most))

@@ -9,6 +9,7 @@ type Facts =
   | { kind: 'mismatch'; joint: ResolvedJoint; reason: string }
   | { kind: 'self'; joint: ResolvedJoint }
   | { kind: 'outputs'; joint: ResolvedJoint }
+  | { kind: 'drawn twice'; joint: ResolvedJoint; times: number }
   | { kind: 'crowded'; connector: ResolvedConnector; joints: readonly ResolvedJoint[] }
 
 export const wrongMating = defineRule<Facts>({
@@ -22,7 +23,7 @@ export const wrongMating = defineRule<Facts>({
     sources: ['R2', 'R1', 'R29'],
   },
   check({ build }) {
-    return [...wrongJoints(build), ...crowdedConnectors(build)]
+    return [...wrongJoints(build), ...drawnTwice(build), ...crowdedConnectors(build)]
   },
   words({ facts }) {
     if (facts.kind === 'crowded') {
@@ -34,6 +35,11 @@ export const wrongMating = defineRule<Facts>({
     }
     const [a, b] = endsOf(facts.joint)
     const both = `${placeOf(a)} and ${placeOf(b)}`
+    if (facts.kind === 'drawn twice')
+      return {
+        message: `${both} are joined ${facts.times} times over.`,
+        remedy: 'Remove all but one of these joints.',
+      }
     if (facts.kind === 'self')
       return {
         message: `${both} are two ends of the same part.`,
@@ -72,11 +78,49 @@ function wrongJoints(build: ResolvedBuild): RawFinding<Facts>[] {
   })
 }
 
+/** Joints between the same two connectors: one of them is real. */
+function drawnTwice(build: ResolvedBuild): RawFinding<Facts>[] {
+  const byEnds = new Map<string, ResolvedJoint[]>()
+  for (const joint of build.joints) {
+    if (joint.a.joints.length < 2 || joint.b.joints.length < 2) continue
+    const key = endsOf(joint)
+      .map(({ index }) => index)
+      .join(' ')
+    byEnds.set(key, [...(byEnds.get(key) ?? []), joint])
+  }
+  return [...byEnds.values()].flatMap((joints): RawFinding<Facts>[] => {
+    const [joint] = joints
+    if (!joint || joints.length < 2) return []
+    const subjects = [...joints.map(jointSubject), ...endsOf(joint).map(connectorSubject)]
+    return [
+      {
+        severity: 'fault',
+        subjects,
+        detail: 'drawn twice',
+        facts: { kind: 'drawn twice', joint, times: joints.length },
+      },
+    ]
+  })
+}
+
+/** The other end of a joint. */
+const partnerOf = (connector: ResolvedConnector, { a, b }: ResolvedJoint): ResolvedConnector =>
+  a === connector ? b : a
+
+/** One joint for each partner. */
+function toDifferent(connector: ResolvedConnector, joints: readonly ResolvedJoint[]): ResolvedJoint[] {
+  const byPartner = new Map([...joints].reverse().map((joint) => [partnerOf(connector, joint), joint]))
+  return joints.filter((joint) => byPartner.get(partnerOf(connector, joint)) === joint)
+}
+
 /** A drive plug takes a data and a power receptacle side by side; anything else takes one partner. */
 function crowdedConnectors(build: ResolvedBuild): RawFinding<Facts>[] {
   return build.connectors.flatMap((connector): RawFinding<Facts>[] => {
     if (connector.joints.length < 2) return []
-    const mated = connector.joints.filter((joint) => joint.mating.mates)
+    const mated = toDifferent(
+      connector,
+      connector.joints.filter((joint) => joint.mating.mates),
+    )
     const power = mated.filter((joint) => joint.mating.power)
     const data = mated.filter((joint) => joint.mating.lanes > 0)
     const neither = mated.filter((joint) => !joint.mating.power && joint.mating.lanes === 0)

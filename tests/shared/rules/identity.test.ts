@@ -24,6 +24,6 @@ describe('identity', () => {
     const findings = check({ C1: named('RV001'), C2: 'sas-4tb', C3: named('  ') })
     expect(gist(findings)).toEqual(['note build'])
     expect(findings[0]?.message).toBe('C2 and C3 have no serial on the plan.')
-    expect(check({ C1: 'sas-4tb' })[0]?.message).toBe('None of the 1 drive has a serial on the plan.')
+    expect(check({ C1: 'sas-4tb' })[0]?.message).toBe('C1 has no serial on the plan.')
   })
 })

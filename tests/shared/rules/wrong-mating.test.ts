@@ -45,6 +45,7 @@ describe('wrong-mating', () => {
   })
 
   it('one joint drawn twice is one too many', () => {
-    expect(check({ K1: 'hba-4i', W1: 'cable-8087' }, ['K1.port-a W1.a', 'W1.a K1.port-a'])).toHaveLength(2)
+    const found = check({ K1: 'hba-4i', W1: 'cable-8087' }, ['K1.port-a W1.a', 'W1.a K1.port-a'])
+    expect(found.map(({ message }) => message)).toEqual(['K1 port a and W1 a are joined 2 times over.'])
   })
 })
