@@ -17,8 +17,14 @@ export function mate(a: ConnectorType, b: ConnectorType): Mating {
   return {
     mates: true,
     power: a.power !== undefined && b.power !== undefined,
-    lanes: Math.min(a.data?.lanes ?? 0, b.data?.lanes ?? 0),
+    lanes: linkedLanes(a, b),
   }
+}
+
+/** Shells may fit where lanes do not meet: a U.2 drive in a bay wired for U.3. */
+function linkedLanes(a: ConnectorType, b: ConnectorType): number {
+  const meets = (one: ConnectorType, other: ConnectorType) => one.data?.linksOnlyWith?.includes(other.id) ?? true
+  return meets(a, b) && meets(b, a) ? Math.min(a.data?.lanes ?? 0, b.data?.lanes ?? 0) : 0
 }
 
 function whyNot(a: ConnectorType, b: ConnectorType): string {

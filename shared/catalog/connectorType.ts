@@ -44,7 +44,14 @@ export const connectorTypeSchema = z.strictObject({
       hasPowerDisableContact: z.boolean().default(false),
     })
     .optional(),
-  data: z.strictObject({ lanes: z.int().min(1).max(16), sideband: z.boolean().default(false) }).optional(),
+  data: z
+    .strictObject({
+      lanes: z.int().min(1).max(16),
+      sideband: z.boolean().default(false),
+      /** Where some types go in whose lanes stand on other contacts: the types with which lanes meet. */
+      linksOnlyWith: z.array(catalogIdSchema).max(40).optional(),
+    })
+    .optional(),
   matesWith: z.array(catalogIdSchema).max(40),
   keying: z.string().max(400).optional(),
   note: z.string().max(400).optional(),

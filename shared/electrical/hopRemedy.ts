@@ -27,6 +27,7 @@ export function hopRemedy({ owner, at, draws, relief, moment }: BusyHop, otherwi
   if (backplane && backplane.inlets.length > 1) return backplaneRemedy(backplane, relief, moment)
   const move = reliefWords(relief, at)
   if (move) return moment === 'cold-start' ? `${move} Or start the drives in groups.` : move
+  if (owner.model.supply) return `Move some of these devices to another lead of ${owner.part.ref}.`
   return owner.model.kind === 'board' || owner.model.kind === 'backplane'
     ? `Feed fewer devices through ${owner.part.ref}: give them leads of the supply.`
     : otherwise

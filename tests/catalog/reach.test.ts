@@ -50,6 +50,7 @@ const driveFor: Readonly<Record<string, string>> = {
   'sff-8482-receptacle': 'hdd-35-7200-sas-3tb',
   'sff-8680-receptacle': 'hdd-35-7200-sas-12tb',
   'sff-8639-receptacle': 'ssd-u2-nvme-800gb',
+  'sff-ta-1001-receptacle': 'ssd-u3-nvme-1.92tb',
   'sata-22-receptacle': 'hdd-35-7200-sata-3tb',
   'sata-data-receptacle': 'hdd-35-7200-sata-3tb',
 }
@@ -130,6 +131,12 @@ function connectData(
     if (i % 4 === 0) breakout = cable
     else bench.parts.pop()
     return bench.join(breakout, `leg-${(i % 4) + 1}`, backplane, id)
+  }
+  if (type === 'sff-8654-8i-receptacle') {
+    if (i % 2 === 0) host = bench.add('controller-tri-12g-16i')
+    const wide = bench.add('cable-8654-8i-8654-8i')
+    bench.join(host, `port-${'ab'[i % 2]}`, wide, 'a')
+    return bench.join(wide, 'b', backplane, id)
   }
   const isNvme = of.includes('nvme')
   const is8643 = type === 'sff-8643-receptacle'
@@ -212,7 +219,27 @@ describe('every modular drive lead of a known family', () => {
 })
 
 describe('every board', () => {
-  it.each(ofKind('board').map(({ id }) => id))('%s takes its three rails from a supply', (id) => {
+  it('for a supply of 12 V only takes 12 V, and makes 5 V for the drives at its outlets', () => {
+    const bench = new Bench()
+    const [supply, board] = [bench.add('supply-atx12vo-500'), bench.add('board-small-12vo-4-sata')]
+    bench.join(supply, 'main', board, 'main')
+    bench.join(supply, 'eps-1', board, 'eps-1')
+    for (const outlet of ['out-1', 'out-2']) {
+      const lead = bench.add('lead-board-sata-2')
+      bench.join(board, outlet, lead, 'supply')
+      bench.join(lead, 'out-1', bench.add('hdd-35-7200-sata-8tb-pd'), 'plug')
+    }
+    const result = bench.check()
+    const wrong = ['rail-missing', 'unpowered', 'power-disable', 'wrong-mating', 'voltage-out-of-tolerance']
+    expect(result.findings.filter(({ rule }) => wrong.includes(rule))).toEqual([])
+    expect(drivesSee(result, '12V')).toHaveLength(2)
+    for (const voltage of drivesSee(result, '5V')) expect(voltage).toBeGreaterThan(4.75)
+    const made = result.ledger.find(({ name, moment }) => name === `${board} 5 V` && moment === 'full-scan')
+    expect(made).toMatchObject({ kind: 'rail', rail: '5V', limit: 6 })
+  })
+
+  const withMain24 = ofKind('board').filter(({ connectors }) => connectors[0]!.type === 'atx-24-receptacle')
+  it.each(withMain24.map(({ id }) => id))('%s takes its three rails from a supply', (id) => {
     const bench = new Bench()
     const [supply, board, main] = [bench.add('supply-atx-1000'), bench.add(id), bench.add('lead-main-24-b')]
     bench.join(supply, 'main', main, 'supply')
@@ -226,6 +253,32 @@ describe('every board', () => {
     expect(devices.map(({ rail }) => rail).sort()).toEqual(['12V', '3.3V', '5V'])
     for (const { rail, voltage_V } of devices)
       expect(voltage_V, rail).toBeGreaterThan({ '12V': 11.4, '5V': 4.75, '3.3V': 3.14 }[rail])
+  })
+})
+
+describe('a U.3 bay', () => {
+  const seat = (drive: string) => {
+    const bench = new Bench()
+    const backplane = bench.add('backplane-4-u3')
+    feed(bench, backplane, startsWith(model('backplane-4-u3'), 'power-'))
+    const [controller, cable] = [bench.add('controller-tri-12g-16i'), bench.add('cable-8654-8i-8654-8i')]
+    bench.join(controller, 'port-a', cable, 'a')
+    bench.join(cable, 'b', backplane, 'data-1')
+    bench.join(backplane, 'bay-1', bench.add(drive), 'plug')
+    return bench.check()
+  }
+
+  it('links SATA, SAS and U.3 drives [R12]', () => {
+    for (const drive of ['hdd-35-7200-sata-3tb', 'hdd-35-7200-sas-3tb', 'ssd-u3-nvme-1.92tb'])
+      expect(seat(drive).dataPaths.filter(({ works }) => works).length, drive).toBeGreaterThan(0)
+  })
+
+  it('takes a U.2 drive and leaves it dark, and says why [R12]', () => {
+    const { findings } = seat('ssd-u2-nvme-800gb')
+    expect(findings.filter(({ rule }) => rule === 'wrong-mating')).toEqual([])
+    const [dark] = findings.filter(({ rule }) => rule === 'no-data-path')
+    expect(dark?.severity).toBe('fault')
+    expect(dark?.message).toContain('its lanes stand on other contacts')
   })
 })
 

@@ -11,6 +11,7 @@ interface Facts {
   stop:
     | { kind: 'open' }
     | { kind: 'wrong plug' }
+    | { kind: 'other lanes'; at: ResolvedConnector }
     | { kind: 'dead end'; at: ResolvedConnector }
     | { kind: 'expander'; part: ResolvedPart }
     | { kind: 'other'; part: ResolvedPart }
@@ -33,7 +34,7 @@ export const noDataPath = defineRule<Facts>({
     return lost.map((drive) => {
       const stop = whereItStops(drive, ports)
       const onTheShelf = drive.part.role === 'spare' && drive.connectors.every((end) => end.joints.length === 0)
-      const at = stop.kind === 'dead end' ? [connectorSubject(stop.at)] : 'part' in stop ? [partSubject(stop.part)] : []
+      const at = 'at' in stop ? [connectorSubject(stop.at)] : 'part' in stop ? [partSubject(stop.part)] : []
       return {
         severity: onTheShelf ? 'note' : 'fault',
         subjects: [partSubject(drive), ...at],
@@ -54,6 +55,11 @@ export const noDataPath = defineRule<Facts>({
           message: `${name} has a data connector on its plug that does not mate.`,
           remedy: 'Use a leg, cable or backplane whose receptacle fits this plug.',
         }
+      case 'other lanes':
+        return {
+          message: `${name} goes into ${placeOf(stop.at)}, but its lanes stand on other contacts (${stop.at.type.name}): the link stays dark.`,
+          remedy: 'Use a bay wired for this kind of drive, or a drive made for this bay.',
+        }
       case 'dead end':
         return {
           message: `The data path of ${name} ends at ${placeOf(stop.at)}: no controller reaches it.`,
@@ -73,10 +79,19 @@ export const noDataPath = defineRule<Facts>({
   },
 })
 
+/** Places that a plug goes into although no lane meets there. */
+const darkPartners = (plug: ResolvedConnector): ResolvedConnector[] =>
+  plug.joints
+    .filter(({ mating }) => mating.mates && mating.lanes === 0)
+    .map(({ a, b }) => (a === plug ? b : a))
+    .filter(({ type }) => type.data !== undefined)
+
 function whereItStops(drive: ResolvedPart, ports: readonly (ActivePort | undefined)[]): Facts['stop'] {
   const plugs = drive.connectors.filter((connector) => laneCount(connector) > 0)
   const plug = plugs.find((connector) => connector.joints.some((joint) => joint.mating.lanes > 0))
   if (!plug) {
+    const other = plugs.flatMap(darkPartners)[0]
+    if (other) return { kind: 'other lanes', at: other }
     const clash = plugs.some((connector) => connector.joints.some((joint) => !joint.mating.mates))
     return clash ? { kind: 'wrong plug' } : { kind: 'open' }
   }
