@@ -1,20 +1,7 @@
 import { counted, listed } from '../check/words.ts'
-import type { Author } from '../contract/activity.ts'
 import type { Approval, ReviewState } from '../contract/reviewState.ts'
 import type { ReviewRules, Round, VerdictKind } from '../contract/rounds.ts'
 import { approvalsOf, type RoundFacts } from './standing.ts'
-
-/** Somebody's name as it stands beside what they did. */
-export function authorName(author: Author): string {
-  switch (author.kind) {
-    case 'member':
-      return author.name
-    case 'guest':
-      return `${author.name} (guest)`
-    case 'former':
-      return 'former member'
-  }
-}
 
 /** "Approved at revision 12 by Noor Castellan and Jo (guest)"; once the diagram moved on, that it lapsed, and where. */
 export function approvalWords({ revision, by, lapsedRevision }: Approval): string {

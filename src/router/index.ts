@@ -15,7 +15,11 @@ export function makeRouter(history: RouterHistory = createWebHistory()): Router 
   router.beforeEach(async (to) => {
     const session = useSessionStore()
     await session.ensure()
-    return admit(to, { signedIn: session.user !== null, administrator: session.isAdministrator })
+    return admit(to, {
+      signedIn: session.user !== null,
+      administrator: session.isAdministrator,
+      guestOf: session.guest?.buildId ?? null,
+    })
   })
 
   router.afterEach((to, _from, failure) => {

@@ -37,6 +37,13 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Invitation', access: 'anybody' },
   },
   {
+    path: clientPaths.link(':token'),
+    name: 'link',
+    component: () => import('../views/LinkView.vue'),
+    props: true,
+    meta: { title: 'A link into a build', access: 'anybody' },
+  },
+  {
     path: '/account',
     name: 'account',
     component: () => import('../views/AccountView.vue'),
@@ -53,7 +60,14 @@ export const routes: RouteRecordRaw[] = [
     name: 'build',
     component: () => import('../views/BuildView.vue'),
     props: true,
-    meta: { title: 'Wiring', wide: true },
+    meta: { title: 'Wiring', wide: true, access: 'build' },
+  },
+  {
+    path: '/builds/:buildId/revisions/:revision',
+    name: 'frozen',
+    component: () => import('../views/FrozenView.vue'),
+    props: true,
+    meta: { title: 'Wiring', wide: true, access: 'build' },
   },
   {
     path: '/builds/:buildId/people',

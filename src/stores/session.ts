@@ -1,13 +1,17 @@
 import { defineStore } from 'pinia'
 import { computed, ref } from 'vue'
+import type { GuestSession } from '#shared/contract/guest.ts'
 import type { Session, User } from '#shared/contract/session.ts'
 import * as accounts from '../api/accounts.ts'
+import { leaveAsGuest } from '../api/buildLinks.ts'
 import * as api from '../api/session.ts'
 
 /** Who is signed in here. */
 export const useSessionStore = defineStore('session', () => {
   const session = ref<Session>()
   const user = computed<User | null>(() => session.value?.user ?? null)
+  /** Somebody who came by a link, where nobody is signed in. */
+  const guest = computed<GuestSession | null>(() => (user.value ? null : (session.value?.guest ?? null)))
   const isAdministrator = computed(() => user.value?.role === 'administrator')
   const editsCatalog = computed(() => isAdministrator.value || user.value?.role === 'catalog-editor')
 
@@ -47,6 +51,11 @@ export const useSessionStore = defineStore('session', () => {
     await load()
   }
 
+  async function leave(): Promise<void> {
+    await leaveAsGuest()
+    await load()
+  }
+
   function rename(renamed: User): void {
     if (session.value) session.value = { ...session.value, user: renamed }
   }
@@ -75,6 +84,7 @@ export const useSessionStore = defineStore('session', () => {
   return {
     session,
     user,
+    guest,
     isAdministrator,
     editsCatalog,
     hasEnded,
@@ -85,6 +95,7 @@ export const useSessionStore = defineStore('session', () => {
     signIn,
     register,
     signOut,
+    leave,
     rename,
     signInAgain,
     askAgain,

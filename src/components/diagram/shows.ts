@@ -21,13 +21,14 @@ const faces = [
   { id: 'joints', label: 'Joints', component: defineAsyncComponent(() => import('./JointsTable.vue')) },
   { id: 'findings', label: 'Findings' },
   { id: 'bays', label: 'Bays', component: defineAsyncComponent(() => import('../drives/BayList.vue')) },
+  { id: 'review', label: 'Review', component: defineAsyncComponent(() => import('../review/ReviewFace.vue')) },
 ] as const satisfies readonly Face[]
 
 export type Show = (typeof faces)[number]['id']
 export type ShownFace = Face & { id: Show }
 
 /** On a phone the lists come first: the sheet is there to look at. */
-const firstOnPhone: readonly Show[] = ['findings', 'joints', 'bays', 'ledger', 'wiring']
+const firstOnPhone: readonly Show[] = ['findings', 'joints', 'bays', 'review', 'ledger', 'wiring']
 
 /** The faces in their order, for a wide window or for a phone. */
 export function showsOf(isNarrow: boolean): readonly ShownFace[] {

@@ -2,13 +2,16 @@ import { describe, expect, it } from 'vitest'
 import { admit, innerPath, type Access } from '../../../src/router/access.ts'
 import { routes } from '../../../src/router/routes.ts'
 
-const visitor = { signedIn: false, administrator: false }
-const member = { signedIn: true, administrator: false }
-const administrator = { signedIn: true, administrator: true }
+const visitor = { signedIn: false, administrator: false, guestOf: null }
+const guest = { ...visitor, guestOf: 'b1' }
+const member = { ...visitor, signedIn: true }
+const administrator = { ...member, administrator: true }
 const page = (access: Access | undefined, fullPath = '/builds/b1', query = {}) => ({
   meta: { access },
   fullPath,
   query,
+  name: 'build',
+  params: { buildId: 'b1' },
 })
 
 describe('a page', () => {
@@ -27,6 +30,18 @@ describe('a page', () => {
     expect(admit(page('guest'), visitor)).toBe(true)
     expect(admit(page('guest'), member)).toEqual({ name: 'builds' })
     expect(admit(page('guest', '/sign-in', { next: '/catalog' }), member)).toBe('/catalog')
+  })
+
+  it('of a build is open to guests of that very build', () => {
+    expect(admit(page('build'), guest)).toBe(true)
+    expect(admit(page('build'), { ...guest, guestOf: 'b2' })).toMatchObject({ name: 'sign-in' })
+    expect(admit(page('build'), visitor)).toMatchObject({ name: 'sign-in' })
+    expect(admit(page(undefined), guest)).toMatchObject({ name: 'sign-in' })
+    expect(admit(page('administrator'), guest)).toMatchObject({ name: 'sign-in' })
+  })
+
+  it('of all builds takes a guest to theirs', () => {
+    expect(admit({ ...page(undefined), name: 'builds' }, guest)).toEqual({ name: 'build', params: { buildId: 'b1' } })
   })
 
   it('for anybody is open to all', () =>
@@ -57,6 +72,7 @@ describe('the routes', () => {
         'catalog',
         'connector-type',
         'invitation',
+        'link',
         'model',
         'not-found',
         'register',
