@@ -1,13 +1,11 @@
-import type { ResolvedBuild, ResolvedConnector, ResolvedPart } from '../build/resolve.ts'
+import type { ResolvedBuild, ResolvedPart } from '../build/resolve.ts'
 import type { CheckResult } from '../check/result.ts'
 import { severities } from '../check/severity.ts'
-import { carriesPower, outletsOf } from '../layout/carries.ts'
 import { refRanges } from './diagram/partsBlock.ts'
 import { withinLimits } from './diagram/titleBlock.ts'
+import { dataPathWords } from './dataWays.ts'
+import { powerWays, powerWords } from './powerWays.ts'
 import { driveWords, supplyLines } from './words.ts'
-
-/** Steps of a way that are followed before it is taken for a circle. */
-const mostSteps = 24
 
 /**
  * A build in plain text, for a forum or a mail: supply and whose leads, every drive with how it is fed and reached,
@@ -52,45 +50,22 @@ function modelLines(build: ResolvedBuild, kinds: readonly string[]): string[] {
 }
 
 function driveLines(build: ResolvedBuild, result: CheckResult): string[] {
-  const paths = new Map(result.dataPaths.filter((path) => path.works).map((path) => [path.drive, path]))
   return build.parts
     .filter(({ model }) => model.kind === 'drive')
     .map((drive) => {
       const { ref, bay, serial, role } = drive.part
-      const path = paths.get(drive.part.id)
-      const host = path && build.partById.get(path.controllerPart)
-      const port = host?.connectorById.get(path?.port ?? '')?.connector.label ?? path?.port
       const place = bay ? `bay ${bay.slot}` : 'no bay'
       const what = [driveWords(drive.model), role, serial].filter(Boolean).join(', ')
-      const data = host ? `data ${host.part.ref} ${port}, lane ${path?.lane ?? 0}` : 'no data path'
+      const path = dataPathWords(build, result.dataPaths, drive)
+      const data = path === '' ? 'no data path' : `data ${path}`
       return `  ${place}: ${ref}, ${what}; ${wayTo(drive)}; ${data}`
     })
 }
 
 /** "power T1 drive 2 > W2 1 > W5 2", from the supply to the drive. */
 function wayTo(drive: ResolvedPart): string {
-  const steps: string[] = []
-  let inlets: readonly ResolvedConnector[] = drive.connectors
-  for (let step = 0; step < mostSteps; step++) {
-    const joint = inlets.flatMap(({ joints }) => joints).find(({ mating }) => mating.power)
-    if (!joint) return steps.length === 0 ? 'not fed' : `power open at ${steps.join(' > ')}`
-    const outlet: ResolvedConnector = inlets.includes(joint.a) ? joint.b : joint.a
-    steps.unshift(`${outlet.part.part.ref} ${outlet.connector.label}`)
-    if (outlet.part.model.kind === 'supply') return `power ${steps.join(' > ')}`
-    inlets = inletsBehind(outlet)
-  }
-  return `power in a circle at ${steps.join(' > ')}`
-}
-
-/** Inlets whose wires lead to an outlet, those with a partner first. */
-function inletsBehind({ part, connector }: ResolvedConnector): ResolvedConnector[] {
-  const outlets = outletsOf(part)
-  const back = new Set([connector.id])
-  for (const id of back)
-    for (const { from, to, line } of part.model.wiring) if (to === id && line !== 'return') back.add(from)
-  return part.connectors
-    .filter((one) => carriesPower(one) && back.has(one.connector.id) && !outlets.has(one.connector.id))
-    .sort((a, b) => Math.sign(b.joints.length) - Math.sign(a.joints.length))
+  const words = powerWords(powerWays(drive))
+  return words === '' ? 'not fed' : `power ${words}`
 }
 
 function findingLines({ findings }: CheckResult): string[] {
