@@ -2,16 +2,14 @@ import type { Logger } from 'pino'
 import type { Config } from './config.ts'
 import { openDatabase } from './db/connection.ts'
 import { makeLive } from './events/live.ts'
-import { checkBuilds } from './jobs/checkBuilds.ts'
-import { cleanUp } from './jobs/cleanUp.ts'
+import { allJobs, type JobContext } from './jobs/allJobs.ts'
 import { makeJobLoop } from './jobs/jobLoop.ts'
-import { sendMail } from './jobs/sendMail.ts'
 import { makeTransport, type MailTransport } from './mail/transport.ts'
 import { loadCatalogFiles } from './services/catalogFiles.ts'
 import { makeCatalogService } from './services/catalogService.ts'
 import { makeCheckService } from './services/checkService.ts'
+import { makeComparisonService } from './services/comparisonService.ts'
 import type { Context } from './services/context.ts'
-import { answerPasswordReset } from './services/passwordResetService.ts'
 import { loadSecrets } from './services/secretService.ts'
 
 export interface OwnedContext extends Context {
@@ -29,33 +27,29 @@ export function makeContext(
   const database = openDatabase(config.databaseUrl, config.databasePool)
   const catalog = makeCatalogService(database, loadCatalogFiles())
   const checks = makeCheckService()
-  const context: OwnedContext = {
+  const shared: JobContext = {
     config,
     database,
-    secrets: { accessToken: '', csrf: '' },
+    secrets: { accessToken: '', csrf: '', unsubscribe: '' },
     catalog,
     checks,
+    comparisons: makeComparisonService(),
     log,
     publicUrl: config.publicUrl ?? `http://${config.host}:${config.port}`,
-    jobs: makeJobLoop(
-      {
-        'answer password resets': () => answerPasswordReset(context),
-        'send mail': sendMail(database, transport, log),
-        'check builds': checkBuilds({ database, catalog, checks, log }),
-        'clean up': cleanUp(database),
-      },
-      log,
-    ),
-    live: makeLive(config, database, log, () => context.jobs.wake()),
+  }
+  const jobs = makeJobLoop(allJobs(shared, transport), log)
+  const context: OwnedContext = Object.assign(shared, {
+    jobs,
+    live: makeLive(config, database, log, () => jobs.wake()),
     async loadSecrets() {
-      context.secrets = await loadSecrets(database, config.secret)
+      shared.secrets = await loadSecrets(database, config.secret)
     },
     async close() {
       await context.live.stop()
-      await context.jobs.stop()
+      await jobs.stop()
       checks.close()
       await database.close()
     },
-  }
+  })
   return context
 }

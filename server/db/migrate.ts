@@ -2,6 +2,7 @@ import { pathToFileURL } from 'node:url'
 import { QueryTypes, type Sequelize } from 'sequelize'
 import { Umzug, type UmzugStorage } from 'umzug'
 import { processConfig } from '../config.ts'
+import { prepareQueues } from '../jobs/queue.ts'
 import { openDatabase } from './connection.ts'
 import { withLock } from './lock.ts'
 import { migrations } from './migrations/index.ts'
@@ -43,7 +44,11 @@ export function migrator(database: Sequelize) {
 
 /** Brings the database to the newest shape; does nothing when it is there. Two servers starting at once take turns. */
 export async function migrateUp(database: Sequelize): Promise<string[]> {
-  return withLock(database, 'migrate', async () => (await migrator(database).up()).map((done) => done.name))
+  return withLock(database, 'migrate', async () => {
+    const done = await migrator(database).up()
+    await prepareQueues(database)
+    return done.map((step) => step.name)
+  })
 }
 
 if (process.argv[1] && import.meta.url === pathToFileURL(process.argv[1]).href) {

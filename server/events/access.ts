@@ -2,9 +2,7 @@ import { QueryTypes, type Sequelize } from 'sequelize'
 import type { LiveEvent } from '#shared/contract/live.ts'
 
 /** Who listens to a stream, as far as their right to it goes. */
-export type Reader =
-  | { kind: 'member'; userId: string; sessionId: string }
-  | { kind: 'guest'; guestId: string }
+export type Reader = { kind: 'member'; userId: string; sessionId: string } | { kind: 'guest'; guestId: string }
 
 type Reason = LiveEvent<'end'>['reason']
 

@@ -24,7 +24,7 @@ async function readOn(database: Sequelize, stream: Stream): Promise<void> {
   try {
     const { buildId } = stream
     if (buildId === null) return
-    for (let more = true; more || stream.again; ) {
+    for (let more = true; more || stream.again;) {
       stream.again = false
       const lines = await activityAfter({ database }, buildId, stream.lastId, page)
       for (const line of lines) {

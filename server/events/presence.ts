@@ -5,7 +5,13 @@ import { presentSchema, type Present } from '#shared/contract/live.ts'
 /** What processes say to each other about who has which build open. */
 export const presenceWordSchema = z.discriminatedUnion('say', [
   z.object({ say: z.literal('here'), build: z.string(), present: presentSchema }),
-  z.object({ say: z.literal('chosen'), build: z.string(), tab: z.string(), by: authorSchema, chosen: z.array(z.string()) }),
+  z.object({
+    say: z.literal('chosen'),
+    build: z.string(),
+    tab: z.string(),
+    by: authorSchema,
+    chosen: z.array(z.string()),
+  }),
   z.object({ say: z.literal('gone'), build: z.string(), tab: z.string() }),
   /** A process that begins to show a build asks the others who is there. */
   z.object({ say: z.literal('who'), build: z.string() }),

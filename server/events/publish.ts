@@ -1,5 +1,7 @@
 import { QueryTypes, type Transaction } from 'sequelize'
 import type { Happening } from '#shared/contract/activity.ts'
+import { enqueue } from '../jobs/queue.ts'
+import { isNews } from '../services/whoIsTold.ts'
 import type { Context } from '../services/context.ts'
 
 /** Who caused it: a person with an account, or a guest of a link. */
@@ -47,6 +49,7 @@ export async function publish(
     },
   )
   const id = Number(rows[0]?.id)
+  if (isNews(kind)) await enqueue(context.database, 'news', { activityId: id }, transaction)
   await context.database.query('SELECT pg_notify($1, $2)', { bind: [activityChannel, String(id)], transaction })
   return id
 }

@@ -8,72 +8,68 @@ export interface JobLoop {
   start(): void
   /** Says that work was queued. */
   wake(): void
-  /** Does everything that waits now. */
+  /** Does everything that waits now, and what comes of it. */
   drain(): Promise<void>
-  /** Finishes the piece at hand and stops. */
+  /** Finishes what is at hand and stops. */
   stop(): Promise<void>
 }
 
 const pause_ms = 5_000
-/** A job that finds more work without end yields to the others after this many pieces. */
-const piecesInARow = 50
 
-/** Makes the loop. A job that fails is logged and tried again in the next round; the others go on. */
+/**
+ * Makes the loop. Jobs run beside each other, so that a slow mail server holds up nothing but mail. A job that fails is
+ * logged and tried again in the next round; the others go on.
+ */
 export function makeJobLoop(jobs: Readonly<Record<string, Job>>, log: Logger): JobLoop {
+  const runners = Object.entries(jobs).map(([name, job]) => makeRunner(name, job, log))
   let timer: NodeJS.Timeout | undefined
-  let running: Promise<void> | undefined
-  let again = false
-  let started = false
 
-  async function round(): Promise<void> {
-    for (const [name, job] of Object.entries(jobs)) {
-      try {
-        for (let pieces = 0; await job(); pieces++) {
-          if (pieces < piecesInARow) continue
-          again = true
-          break
-        }
-      } catch (error) {
-        log.error({ err: error, job: name }, 'job failed')
-      }
-    }
-  }
-
-  async function rounds(): Promise<void> {
-    do {
-      again = false
-      await round()
-    } while (again)
-  }
-
-  function run(): Promise<void> {
-    again = true
-    running ??= rounds().finally(() => {
-      running = undefined
-      if (started) schedule()
-    })
-    return running
-  }
-
-  function schedule(): void {
-    clearTimeout(timer)
-    timer = setTimeout(() => void run(), pause_ms)
-    timer.unref()
-  }
+  const run = () => Promise.all(runners.map((runner) => runner.run()))
 
   return {
     start() {
-      started = true
+      timer = setInterval(() => void run(), pause_ms)
+      timer.unref()
       void run()
     },
     wake() {
-      if (started) void run()
+      if (timer) void run()
     },
-    drain: run,
+    async drain() {
+      while ((await run()).some(Boolean));
+    },
     async stop() {
-      started = false
-      clearTimeout(timer)
-      await running
+      clearInterval(timer)
+      timer = undefined
+      await Promise.all(runners.map((runner) => runner.rest()))
     },
+  }
+}
+
+function makeRunner(name: string, job: Job, log: Logger) {
+  let running: Promise<boolean> | undefined
+  let again = false
+
+  async function work(): Promise<boolean> {
+    let worked = false
+    do {
+      again = false
+      try {
+        while (await job()) worked = true
+      } catch (error) {
+        log.error({ err: error, job: name }, 'job failed')
+      }
+    } while (again)
+    return worked
+  }
+
+  return {
+    /** Does what waits; true where that was anything. Asked meanwhile, it looks once more. */
+    run(): Promise<boolean> {
+      again = true
+      running ??= work().finally(() => (running = undefined))
+      return running
+    },
+    rest: async () => void (await running),
   }
 }

@@ -1,19 +1,21 @@
 import { clientPaths } from '#shared/contract/links.ts'
 import { roleWords, type BuildRole } from '#shared/contract/build.ts'
+import { button, compose, words, type Footer, type Mail } from './compose.ts'
 
-export interface Mail {
-  subject: string
-  text: string
-  html: string
-}
+export type { Mail } from './compose.ts'
 
-/** A link to set a new password. */
+/** A link to set a new password. It comes only when asked for, so there is nothing to unsubscribe from. */
 export function passwordResetMail(about: { name: string; publicUrl: string; token: string }): Mail {
-  return compose('Set a new Bayloom password', `Hello ${about.name},`, [
-    'somebody, probably you, asked to set a new password for your Bayloom account.',
-    { link: about.publicUrl + clientPaths.passwordReset(about.token), words: 'Set a new password' },
-    'The link works once, within the next hour. If it was not you, do nothing: your password stays as it is.',
-  ])
+  return compose(
+    'Set a new Bayloom password',
+    `Hello ${about.name},`,
+    [
+      words('somebody, probably you, asked to set a new password for your Bayloom account.'),
+      button('Set a new password', about.publicUrl + clientPaths.passwordReset(about.token)),
+      words('The link works once, within the next hour. If it was not you, do nothing: your password stays as it is.'),
+    ],
+    null,
+  )
 }
 
 /** An invitation into a build. */
@@ -23,38 +25,18 @@ export function invitationMail(about: {
   role: BuildRole
   publicUrl: string
   token: string
+  footer: Footer
 }): Mail {
-  return compose(`${about.invitedBy} invites you to the build "${about.buildName}"`, 'Hello,', [
-    `${about.invitedBy} asks you to join the build "${about.buildName}" as ${about.role}: ${roleWords[about.role]}.`,
-    { link: about.publicUrl + clientPaths.invitation(about.token), words: 'Open the build' },
-    'The link is meant for this e-mail address and works for the next 14 days.',
-  ])
-}
-
-type Paragraph = string | { link: string; words: string }
-
-function compose(subject: string, greeting: string, paragraphs: readonly Paragraph[]): Mail {
-  const text = paragraphs.map((p) => (typeof p === 'string' ? p : `${p.words}:\n${p.link}`))
-  const html = paragraphs.map((p) =>
-    typeof p === 'string'
-      ? `<p>${escapeHtml(p)}</p>`
-      : `<p><a href="${escapeHtml(p.link)}">${escapeHtml(p.words)}</a></p>`,
+  return compose(
+    `${about.invitedBy} invites you to the build "${about.buildName}"`,
+    'Hello,',
+    [
+      words(
+        `${about.invitedBy} asks you to join the build "${about.buildName}" as ${about.role}: ${roleWords[about.role]}.`,
+      ),
+      button('Open the build', about.publicUrl + clientPaths.invitation(about.token)),
+      words('The link is meant for this e-mail address and works for the next 14 days.'),
+    ],
+    about.footer,
   )
-  return {
-    subject: oneLine(subject),
-    text: [greeting, ...text, 'Bayloom'].join('\n\n') + '\n',
-    html: [`<p>${escapeHtml(greeting)}</p>`, ...html, '<p>Bayloom</p>'].join('\n'),
-  }
 }
-
-/** A subject is one header line: what people typed into names must not start another. */
-const oneLine = (text: string): string => text.replace(/\p{Cc}+/gu, ' ').slice(0, 200)
-
-const entities: Readonly<Record<string, string>> = {
-  '&': '&amp;',
-  '<': '&lt;',
-  '>': '&gt;',
-  '"': '&quot;',
-  "'": '&#39;',
-}
-const escapeHtml = (text: string): string => text.replace(/[&<>"']/g, (sign) => entities[sign] ?? sign)

@@ -16,4 +16,4 @@ export function logRequests(log: Logger): RequestHandler {
 
 /** A path as it may be logged. */
 export const withoutTokens = (url: string): string =>
-  url.replace(/\/(invitations|password-resets|links)\/[^/?]{20,}/g, '/$1/…').replace(/\?.*/, '')
+  url.replace(/\/(invitations|password-resets|links|unsubscribe)\/[^/?]{20,}/g, '/$1/…').replace(/\?.*/, '')

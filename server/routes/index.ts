@@ -7,6 +7,7 @@ import { healthRoutes } from './health.ts'
 import { invitationRoutes } from './invitations.ts'
 import { liveRoutes } from './live.ts'
 import { mailboxRoutes } from './mailbox.ts'
+import { mailChoiceRoutes } from './mailChoices.ts'
 import { memberRoutes } from './members.ts'
 import { openApiRoute } from './openApi.ts'
 import { ownModelRoutes } from './ownModels.ts'
@@ -22,6 +23,7 @@ const resources: readonly AnyRoute[] = [
   ...accountRoutes,
   ...userRoutes,
   ...mailboxRoutes,
+  ...mailChoiceRoutes,
   ...buildRoutes,
   ...revisionRoutes,
   ...memberRoutes,

@@ -38,7 +38,7 @@ async function handle(
   response.locals['user'] = actor?.id
   const visiting = concernsGuests(route.policy) ? await identifyGuest(context, request) : null
   if (!visiting && may(actor, route.policy) === 'sign-in') throw new Refusal('not-signed-in')
-  if (route.method !== 'get') refuseForged(context, request, signedIn)
+  if (route.method !== 'get' && !route.isOneClick) refuseForged(context, request, signedIn)
 
   const params = readParams(route, request)
   const buildRole = concernsBuild(route.policy) && actor ? await findRole(context, buildIdOf(params), actor.id) : null

@@ -21,5 +21,8 @@ export const userParams = z.object({ userId: idSchema })
 export const linkParams = z.object({ buildId: idSchema, linkId: idSchema })
 export const guestParams = z.object({ buildId: idSchema, guestId: idSchema })
 export const roundParams = z.object({ buildId: idSchema, roundId: idSchema })
+export const messageParams = z.object({ messageId: idSchema })
+/** What an unsubscribe link carries: kind, address and seal. */
+export const sealedParams = z.object({ token: z.string().min(20).max(600) })
 export const tokenParams = z.object({ token: tokenSchema })
 export const modelParams = z.object({ modelId: catalogIdSchema })

@@ -22,6 +22,8 @@ export interface Route<
   body?: Body
   bodyLimit?: BodyLimit
   rateLimit?: RateLimitName
+  /** Sent by mail programs, from anywhere and without our token: what its path carries is the proof. */
+  isOneClick?: boolean
   /** The answer is a stream of server-sent events; its schema is that of each event's data. */
   streams?: boolean
   /** Schema of each answer, by status; null where there is no body. */

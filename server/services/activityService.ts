@@ -1,4 +1,4 @@
-import { QueryTypes } from 'sequelize'
+import { QueryTypes, type Transaction } from 'sequelize'
 import type { Activity, Author, Happening } from '#shared/contract/activity.ts'
 import type { ActivityPage } from '#shared/contract/live.ts'
 import type { Context } from './context.ts'
@@ -72,10 +72,11 @@ export async function activityAfter(
 export async function activityByIds(
   context: Pick<Context, 'database'>,
   ids: readonly number[],
+  transaction?: Transaction,
 ): Promise<Activity[]> {
   const rows = await context.database.query<ActivityRow>(
     `SELECT ${activityColumns} FROM ${activityFrom} WHERE a.id = ANY($1::bigint[]) ORDER BY a.id`,
-    { bind: [[...ids]], type: QueryTypes.SELECT },
+    { bind: [[...ids]], type: QueryTypes.SELECT, ...(transaction ? { transaction } : {}) },
   )
   return rows.map(toActivity)
 }

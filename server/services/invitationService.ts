@@ -7,6 +7,7 @@ import { publish } from '../events/publish.ts'
 import { invitationMail } from '../mail/templates.ts'
 import { Build, BuildMember, Invitation, User } from '../models/index.ts'
 import type { Context } from './context.ts'
+import { mailFooter, timingsOf } from './mailChoiceService.ts'
 import { queueMail } from './mailboxService.ts'
 import { Refusal } from './refusal.ts'
 import { hashToken, makeToken } from './tokens.ts'
@@ -38,6 +39,7 @@ export async function inviteWithin(
   transaction: Transaction,
 ): Promise<Invitation> {
   await refuseMember(build.id, request.email, transaction)
+  await refuseUnwanted(context, request.email, transaction)
   await Invitation.destroy({ where: { buildId: build.id, email: request.email, acceptedAt: null }, transaction })
   const token = makeToken()
   const made = await Invitation.create(
@@ -51,15 +53,25 @@ export async function inviteWithin(
     },
     { transaction },
   )
+  const why = `You get this because ${invitedBy.name} wrote your address into an invitation.`
+  const { footer, token: unsubscribeToken } = mailFooter(context, request.email, 'invitation', why)
   const mail = invitationMail({
+    footer,
     buildName: build.name,
     invitedBy: invitedBy.name,
     role: request.role,
     publicUrl: context.publicUrl,
     token,
   })
-  await queueMail(request.email, mail, transaction)
+  await queueMail(context, { to: request.email, kind: 'invitation', mail, unsubscribeToken }, transaction)
   return made
+}
+
+/** An address that switched invitations off is left alone, and whoever invites is told so instead of waiting. */
+async function refuseUnwanted(context: Context, email: string, transaction: Transaction): Promise<void> {
+  const timingOf = await timingsOf(context.database, 'invitation', [email], transaction)
+  if (timingOf(email) === 'never')
+    throw new Refusal('forbidden', { detail: `${email} has asked not to be invited by mail. Send a link yourself.` })
 }
 
 async function refuseMember(buildId: string, email: string, transaction: Transaction): Promise<void> {

@@ -6,12 +6,17 @@ import { tag } from './tokens.ts'
 export interface Secrets {
   accessToken: string
   csrf: string
+  unsubscribe: string
 }
 
 /** The given secret, or the installation's own: made at random once and kept in the database. */
 export async function loadSecrets(database: Sequelize, given: string | null): Promise<Secrets> {
   const secret = given ?? (await ownSecret(database))
-  return { accessToken: tag(secret, 'access-token'), csrf: tag(secret, 'csrf') }
+  return {
+    accessToken: tag(secret, 'access-token'),
+    csrf: tag(secret, 'csrf'),
+    unsubscribe: tag(secret, 'unsubscribe'),
+  }
 }
 
 async function ownSecret(database: Sequelize): Promise<string> {

@@ -16,7 +16,12 @@ export const mailKindFacts: Readonly<
   Record<MailKind, { timings: readonly MailTiming[]; usual: MailTiming; words: string; off: string }>
 > = {
   'review-asked': { ...personal, usual: 'at-once', words: 'You are asked for a review', off: 'requests for a review' },
-  verdict: { ...personal, usual: 'at-once', words: 'A verdict on a review, or an approval that lapses', off: 'verdicts' },
+  verdict: {
+    ...personal,
+    usual: 'at-once',
+    words: 'A verdict on a review, or an approval that lapses',
+    off: 'verdicts',
+  },
   mention: { ...personal, usual: 'at-once', words: 'Somebody mentions you', off: 'mentions' },
   reply: { ...personal, usual: 'at-once', words: 'Somebody answers where you wrote', off: 'replies' },
   comment: { ...personal, usual: 'digest', words: 'Any other comment on a build you own', off: 'comments' },

@@ -54,7 +54,7 @@ async function makeTemplate(client: pg.Client, template: string): Promise<void> 
  * migrations gives another name.
  */
 async function migratedTemplate(client: pg.Client): Promise<string> {
-  const template = `bayloom_template_${hashOf(root, ['server/db/migrations']).slice(0, 16)}`
+  const template = `bayloom_template_${hashOf(root, ['server/db/migrations', 'server/jobs/queues.ts']).slice(0, 16)}`
   await client.query("SELECT pg_advisory_lock(hashtext('bayloom_template'))")
   try {
     if (!(await exists(client, template))) await makeTemplate(client, template)

@@ -5,8 +5,21 @@ import { catalog } from './003-catalog.ts'
 import { demoFiles } from './004-demo-files.ts'
 import { links } from './005-links.ts'
 import { activity } from './006-activity.ts'
+import { revisions } from './007-revisions.ts'
 import { live } from './010-live.ts'
+import { mail } from './011-mail.ts'
 import { rounds } from './012-rounds.ts'
 
 /** Every migration in order. A migration that has shipped is never changed; add the next number. */
-export const migrations: readonly Migration[] = [accounts, builds, catalog, demoFiles, links, activity, live, rounds]
+export const migrations: readonly Migration[] = [
+  accounts,
+  builds,
+  catalog,
+  demoFiles,
+  links,
+  activity,
+  revisions,
+  live,
+  mail,
+  rounds,
+]
