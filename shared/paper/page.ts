@@ -17,6 +17,10 @@ export interface PageText {
   colour?: string
   /** Clockwise degrees about (x, y). */
   turn?: number
+  /** Outline behind the letters, where text stands over runs. */
+  halo?: { colour: string; width_mm: number }
+  /** Heads a section: an entry in the table of contents of a PDF. */
+  isHeading?: boolean
 }
 
 export interface PageLine {
@@ -41,6 +45,29 @@ export interface PageBox {
   stroke?: string
   stroke_mm?: number
   radius?: number
+  /** Stroke and gap in millimetres, as "1 1". */
+  dash?: string
+}
+
+/** Any other shape: path data in the words of SVG, in millimetres. */
+export interface PagePath {
+  kind: 'path'
+  d: string
+  fill?: string
+  stroke?: string
+  stroke_mm?: number
+  dash?: string
+  round?: boolean
+}
+
+/** A window: nothing of its marks shows outside. */
+export interface PageWindow {
+  kind: 'window'
+  x: number
+  y: number
+  width: number
+  height: number
+  marks: readonly PageMark[]
 }
 
 /** A code to scan: dark modules as rows of booleans, drawn `size` millimetres wide. */
@@ -52,7 +79,7 @@ export interface PageCode {
   modules: readonly (readonly boolean[])[]
 }
 
-export type PageMark = PageText | PageLine | PageBox | PageCode
+export type PageMark = PageText | PageLine | PageBox | PagePath | PageCode | PageWindow
 
 export interface Page {
   width_mm: number

@@ -81,11 +81,17 @@ function severalWords(first: PowerWay, ways: readonly PowerWay[]): string {
   let shared = 0
   const fromEnd = (way: PowerWay, i: number) => way.steps.at(-1 - i)?.outlet
   while (shared < first.steps.length && ways.every((way) => fromEnd(way, shared) === fromEnd(first, shared))) shared++
-  const depth = Math.max(...ways.map(({ steps }) => steps.length)) - shared
-  const before = Array.from({ length: depth }, (_, level) => {
-    const refs = ways.flatMap(({ steps }) => steps.at(-1 - shared - level)?.part.part.ref ?? [])
-    return refRanges([...new Set(refs)])
-  }).reverse()
+  const heads = ways.map(({ steps }) => steps.slice(0, steps.length - shared))
   const after = first.steps.slice(first.steps.length - shared).map(stepWords)
-  return [...before, ...after].join(' > ')
+  return [...headWords(heads), ...after].join(' > ')
+}
+
+/** Ways of one length level by level, others each for itself. */
+function headWords(heads: readonly (readonly WayStep[])[]): string[] {
+  const depth = heads[0]?.length ?? 0
+  if (heads.some((steps) => steps.length !== depth))
+    return [heads.map((steps) => steps.map(stepWords).join(' > ')).join(' and ')]
+  return Array.from({ length: depth }, (_, level) =>
+    refRanges([...new Set(heads.flatMap((steps) => steps[level]?.part.part.ref ?? []))]),
+  )
 }

@@ -1,5 +1,6 @@
 import type { Page, PageMark, PaperDocument } from '../page.ts'
 import { flagLabel, plainLabel, wrapLabel, type Cell, type LabelForm, type LabelLayout } from './forms.ts'
+import { moved } from '../place.ts'
 import type { Label } from './label.ts'
 import { cellCorner, cellsOf, type LabelSheet } from './sheet.ts'
 import { readable_pt } from './textBlock.ts'
@@ -96,8 +97,3 @@ const edge = (sheet: LabelSheet, x: number, y: number): PageMark => ({
   stroke: '#000000',
   stroke_mm: 0.1,
 })
-
-function moved(mark: PageMark, x: number, y: number): PageMark {
-  if (mark.kind === 'line') return { ...mark, x1: mark.x1 + x, y1: mark.y1 + y, x2: mark.x2 + x, y2: mark.y2 + y }
-  return { ...mark, x: mark.x + x, y: mark.y + y }
-}
