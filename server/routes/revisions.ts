@@ -1,13 +1,22 @@
 import { z } from 'zod'
+import { saveAnswerSchema, saveConflictSchema, saveRequestSchema } from '#shared/contract/build.ts'
 import {
+  comparisonQuerySchema,
+  comparisonSchema,
+  describeRevisionRequestSchema,
   listRevisionsQuerySchema,
   openRevisionSchema,
+  restoreRevisionRequestSchema,
   revisionSchema,
-  saveAnswerSchema,
-  saveConflictSchema,
-  saveRequestSchema,
-} from '#shared/contract/build.ts'
-import { getRevision, postRevision, readRevisions } from '../controllers/revisionController.ts'
+} from '#shared/contract/revisions.ts'
+import {
+  getComparison,
+  getRevision,
+  patchRevision,
+  postRestore,
+  postRevision,
+  readRevisions,
+} from '../controllers/revisionController.ts'
 import { buildParams, revisionParams } from './params.ts'
 import { defineRoute } from './route.ts'
 
@@ -27,7 +36,7 @@ export const revisionRoutes = [
     method: 'get',
     path: '/api/builds/:buildId/revisions',
     policy: 'see-build',
-    summary: 'The history, newest first, 50 a page',
+    summary: 'The history, newest first, 50 at a time; all or the named ones',
     params: buildParams,
     query: listRevisionsQuerySchema,
     answers: { 200: z.array(revisionSchema) },
@@ -41,5 +50,35 @@ export const revisionRoutes = [
     params: revisionParams,
     answers: { 200: openRevisionSchema },
     controller: getRevision,
+  }),
+  defineRoute({
+    method: 'patch',
+    path: '/api/builds/:buildId/revisions/:revision',
+    policy: 'edit-build',
+    summary: 'Give a revision a name or a note, or take them away',
+    params: revisionParams,
+    body: describeRevisionRequestSchema,
+    answers: { 200: revisionSchema },
+    controller: patchRevision,
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/api/builds/:buildId/revisions/:revision/restore',
+    policy: 'edit-build',
+    summary: 'Bring an old state back as a new revision, merged with what others did meanwhile',
+    params: revisionParams,
+    body: restoreRevisionRequestSchema,
+    answers: { 201: saveAnswerSchema, 409: saveConflictSchema },
+    controller: postRestore,
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/builds/:buildId/comparison',
+    policy: 'see-build',
+    summary: 'What changed from one revision to another: in words, findings gained and lost, margins',
+    params: buildParams,
+    query: comparisonQuerySchema,
+    answers: { 200: comparisonSchema },
+    controller: getComparison,
   }),
 ]

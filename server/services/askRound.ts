@@ -10,7 +10,7 @@ import { draftLink, writeLink, type LinkDraft } from './buildLinkService.ts'
 import type { Context } from './context.ts'
 import { inviteWithin } from './invitationService.ts'
 import { Refusal } from './refusal.ts'
-import { readRevision } from './revisionService.ts'
+import { readRevision } from './revisionList.ts'
 import { findRound, readRules } from './roundList.ts'
 
 /** The revision that the reviewers will look at, read and checked before anything is written. */

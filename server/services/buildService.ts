@@ -12,7 +12,7 @@ import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
 import type { KnownGuest } from './guestService.ts'
 import { Refusal } from './refusal.ts'
-import { readRevision } from './revisionService.ts'
+import { readDocument } from './revisionStore.ts'
 
 /** The actor's role in a build; null: none, or no such build. */
 export async function findRole(context: Context, buildId: string, userId: string): Promise<BuildRole | null> {
@@ -41,7 +41,7 @@ export async function openBuildAsGuest(context: Context, guest: KnownGuest): Pro
 export async function newestDocument(context: Context, buildId: string): Promise<BuildDocument> {
   const build = await Build.findByPk(buildId, { attributes: ['revision'] })
   if (!build) throw new Refusal('not-found')
-  return (await readRevision(context, buildId, build.revision)).document
+  return readDocument(context.database, buildId, build.revision)
 }
 
 /** Makes a build: empty, or as a copy of an example. */

@@ -5,6 +5,7 @@ import type { Live } from '../events/live.ts'
 import type { JobLoop } from '../jobs/jobLoop.ts'
 import type { CatalogService } from './catalogService.ts'
 import type { CheckService } from './checkService.ts'
+import type { ComparisonService } from './comparisonService.ts'
 import type { Secrets } from './secretService.ts'
 
 /** What every use case may need, made once at start. */
@@ -14,6 +15,7 @@ export interface Context {
   secrets: Secrets
   catalog: CatalogService
   checks: CheckService
+  comparisons: ComparisonService
   jobs: JobLoop
   live: Live
   log: Logger

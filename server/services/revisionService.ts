@@ -1,5 +1,4 @@
-import type { Transaction } from 'sequelize'
-import { Op, QueryTypes } from 'sequelize'
+import { Op, type Transaction } from 'sequelize'
 import { apply, ChangeError } from '#shared/build/apply.ts'
 import type { Edit } from '#shared/build/changes.ts'
 import { buildDocumentSchema, type BuildDocument } from '#shared/build/document.ts'
@@ -7,16 +6,15 @@ import { problemsOf, type DocumentProblem } from '#shared/build/problems.ts'
 import { resolve, type ResolvedBuild } from '#shared/build/resolve.ts'
 import { clashes, touched } from '#shared/build/touch.ts'
 import type { CatalogIndex } from '#shared/catalog/catalog.ts'
-import type { Revision, SaveAnswer, SaveRequest } from '#shared/contract/build.ts'
+import type { SaveAnswer, SaveRequest } from '#shared/contract/build.ts'
+import { publish } from '../events/publish.ts'
 import { Build, BuildRevision } from '../models/index.ts'
 import { lapseApprovals } from './approvalService.ts'
 import { contentColumns, promptVerdict } from './buildSummary.ts'
 import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
 import { Refusal } from './refusal.ts'
-
-/** Revisions on one page of the history. */
-const pageSize = 50
+import { readDocument } from './revisionStore.ts'
 
 /** The newest state of a build while it is held for a save, and what others did since the save's base. */
 interface Standing {
@@ -35,29 +33,51 @@ export async function saveRevision(
   authorId: string,
   request: SaveRequest,
 ): Promise<SaveAnswer> {
+  return saveEdits(context, buildId, authorId, request)
+}
+
+/** What is saved: edits as they came, or as they are worked out once the build is held. */
+interface Saving {
+  base: number
+  requestId: string
+  edits: readonly Edit[] | ((transaction: Transaction) => Promise<readonly Edit[]>)
+  /** The revision that the edits bring back. */
+  restored?: number
+}
+
+/** As `saveRevision`, for edits that are made on the server too. */
+export async function saveEdits(
+  context: Context,
+  buildId: string,
+  authorId: string,
+  request: Saving,
+): Promise<SaveAnswer> {
   const catalog = await context.catalog.current()
   const answer = await context.database.transaction(async (transaction) => {
     const build = await holdBuild(buildId, transaction)
     const repeated = await findRepeated(build, request, transaction)
     if (repeated) return repeated
-    const standing = await readStanding(build, request.base, transaction)
-    refuseClashes(standing, request.edits)
-    const document = applyEdits(standing, request.edits)
-    const resolved = refuseLooseEnds(standing, document, catalog.index)
+    const standing = await readStanding(context, build, request.base, transaction)
+    const edits = typeof request.edits === 'function' ? await request.edits(transaction) : request.edits
+    refuseClashes(standing, edits)
+    const document = applyEdits(standing, edits)
+    const resolved = refuseLooseEnds(standing, document, catalog.index, request.restored !== undefined)
     const revision = build.revision + 1
     const savedAt = new Date()
+    const label = labelOf(edits)
     await BuildRevision.append(
       {
         buildId,
         revision,
         document,
         hash: contentHash(document),
-        edits: request.edits,
-        label: labelOf(request.edits),
+        edits,
+        label,
         base: request.base,
         requestId: request.requestId,
         authorId,
         savedAt,
+        ...(request.restored === undefined ? {} : { restored: request.restored }),
       },
       transaction,
     )
@@ -71,6 +91,11 @@ export async function saveRevision(
       },
       { transaction },
     )
+    const what =
+      request.restored === undefined
+        ? ({ kind: 'revision-saved', revision, label } as const)
+        : ({ kind: 'revision-restored', revision, restored: request.restored } as const)
+    await publish(context, buildId, { userId: authorId }, what, transaction)
     await lapseApprovals(context, { buildId, revision, document, cause: { userId: authorId } }, transaction)
     return { revision, savedAt: savedAt.toISOString(), merged: [...standing.since] }
   })
@@ -85,7 +110,7 @@ async function holdBuild(buildId: string, transaction: Transaction): Promise<Bui
 }
 
 /** The first answer to a request that was already carried out. */
-async function findRepeated(build: Build, request: SaveRequest, transaction: Transaction): Promise<SaveAnswer | null> {
+async function findRepeated(build: Build, request: Saving, transaction: Transaction): Promise<SaveAnswer | null> {
   const done = await BuildRevision.findOne({
     where: { buildId: build.id, requestId: request.requestId },
     attributes: ['revision', 'base', 'savedAt'],
@@ -96,12 +121,12 @@ async function findRepeated(build: Build, request: SaveRequest, transaction: Tra
   return { revision: done.revision, savedAt: done.savedAt.toISOString(), merged: merged ?? [] }
 }
 
-async function readStanding(build: Build, base: number, transaction: Transaction): Promise<Standing> {
+async function readStanding(context: Context, build: Build, base: number, transaction: Transaction): Promise<Standing> {
   if (base > build.revision)
     throw new Refusal('bad-input', {
       errors: [{ path: 'base', message: `the newest revision is ${build.revision}` }],
     })
-  const { document } = await readRevisionRow(build.id, build.revision, transaction)
+  const document = await readDocument(context.database, build.id, build.revision, transaction)
   const since = await editsBetween(build.id, base, build.revision + 1, transaction)
   const standing = { build, document, since: since ?? [] }
   if (since === null) throw conflict(standing, [], 'The build was replaced as a whole.')
@@ -164,13 +189,22 @@ function applyEdits(standing: Standing, edits: readonly Edit[]): BuildDocument {
   })
   const parsed = buildDocumentSchema.safeParse(document)
   if (!parsed.success) refuseUnfit(standing, problemsOf(parsed.error))
-  return parsed.data
+  // Not `parsed.data`: what the edits made is kept, so that replaying them gives the same again.
+  return document
 }
 
-/** Refuses references that lead nowhere, but for those that led nowhere before (a model gone from the catalog). */
-function refuseLooseEnds(standing: Standing, document: BuildDocument, index: CatalogIndex): ResolvedBuild {
+/**
+ * Refuses references that lead nowhere, but for those that led nowhere before (a model gone from the catalog). What is
+ * brought back was once saved: it comes as it was.
+ */
+function refuseLooseEnds(
+  standing: Standing,
+  document: BuildDocument,
+  index: CatalogIndex,
+  broughtBack: boolean,
+): ResolvedBuild {
   const resolved = resolve(document, index)
-  if (resolved.problems.length === 0) return resolved
+  if (resolved.problems.length === 0 || broughtBack) return resolved
   const before = new Set(resolve(standing.document, index).problems.map((problem) => problem.message))
   const fresh = resolved.problems.filter((problem) => !before.has(problem.message))
   if (fresh.length > 0) refuseUnfit(standing, fresh.slice(0, 100))
@@ -187,57 +221,4 @@ function labelOf(edits: readonly Edit[]): string {
     text += `; ${label}`
   }
   return text
-}
-
-/** The history, newest first. */
-export async function listRevisions(context: Context, buildId: string, page: number): Promise<Revision[]> {
-  const rows = await context.database.query<RevisionRow>(
-    `${selectRevision} WHERE r.build_id = $1 ORDER BY r.revision DESC LIMIT $2 OFFSET $3`,
-    { bind: [buildId, pageSize, (page - 1) * pageSize], type: QueryTypes.SELECT },
-  )
-  return rows.map(toView)
-}
-
-/** One revision with its document. */
-export async function readRevision(
-  context: Context,
-  buildId: string,
-  revision: number,
-): Promise<{ revision: Revision; document: BuildDocument }> {
-  const rows = await context.database.query<RevisionRow>(
-    `${selectRevision} WHERE r.build_id = $1 AND r.revision = $2`,
-    { bind: [buildId, revision], type: QueryTypes.SELECT },
-  )
-  if (!rows[0]) throw new Refusal('not-found')
-  const { document } = await readRevisionRow(buildId, revision)
-  return { revision: toView(rows[0]), document }
-}
-
-interface RevisionRow {
-  revision: number
-  saved_at: Date
-  saved_by: string | null
-  label: string
-  hash: string
-}
-
-const selectRevision = `SELECT r.revision, r.saved_at, r.label, r.hash, u.name AS saved_by
-  FROM build_revisions r LEFT JOIN users u ON u.id = r.author_id`
-
-const toView = (row: RevisionRow): Revision => ({
-  revision: row.revision,
-  savedAt: row.saved_at.toISOString(),
-  savedBy: row.saved_by,
-  label: row.label,
-  hash: row.hash,
-})
-
-async function readRevisionRow(buildId: string, revision: number, transaction?: Transaction): Promise<BuildRevision> {
-  const row = await BuildRevision.findOne({
-    where: { buildId, revision },
-    attributes: ['document'],
-    ...(transaction ? { transaction } : {}),
-  })
-  if (!row) throw new Refusal('not-found')
-  return row
 }

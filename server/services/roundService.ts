@@ -7,7 +7,7 @@ import { Build } from '../models/index.ts'
 import { lapseApprovals } from './approvalService.ts'
 import type { Context } from './context.ts'
 import { Refusal } from './refusal.ts'
-import { readRevision } from './revisionService.ts'
+import { readRevision } from './revisionList.ts'
 import { findRound, type Reviewer } from './roundList.ts'
 
 const causeOf = (reviewer: Reviewer): Cause =>

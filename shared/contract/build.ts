@@ -105,20 +105,6 @@ export const saveConflictSchema = z.object({
   document: z.unknown(),
 })
 
-export const revisionSchema = z.object({
-  revision: z.number(),
-  savedAt: z.string(),
-  savedBy: z.string().nullable(),
-  label: z.string(),
-  hash: z.string(),
-})
-export type Revision = z.infer<typeof revisionSchema>
-
-/** GET /api/builds/:id/revisions */
-export const listRevisionsQuerySchema = z.strictObject({ page: z.coerce.number().int().min(1).max(100_000).default(1) })
-/** GET /api/builds/:id/revisions/:revision */
-export const openRevisionSchema = z.object({ revision: revisionSchema, document: z.unknown() })
-
 export const memberSchema = z.object({
   user: userSchema.pick({ id: true, name: true, email: true }),
   role: buildRoleSchema,

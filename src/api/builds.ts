@@ -3,12 +3,9 @@ import {
   buildListSchema,
   buildSummarySchema,
   openBuildSchema,
-  openRevisionSchema,
-  revisionSchema,
   saveAnswerSchema,
   type BuildList,
   type BuildSummary,
-  type Revision,
   type SaveAnswer,
   type SaveRequest,
 } from '#shared/contract/build.ts'
@@ -44,12 +41,6 @@ export const saveBuild = (
   save: SaveRequest,
   options: { keepalive?: boolean } = {},
 ): Promise<SaveAnswer> => request(saveAnswerSchema, 'POST', path(buildId, '/revisions'), { body: save, ...options })
-
-export const listRevisions = (buildId: string, page = 1): Promise<Revision[]> =>
-  request(z.array(revisionSchema), 'GET', path(buildId, '/revisions'), { query: { page } })
-
-export const readRevision = (buildId: string, revision: number): Promise<z.infer<typeof openRevisionSchema>> =>
-  request(openRevisionSchema, 'GET', path(buildId, `/revisions/${revision}`))
 
 /** The document itself, as the file that leaves the house. */
 export const exportBuild = (buildId: string): Promise<unknown> => request(z.unknown(), 'GET', path(buildId, '/export'))

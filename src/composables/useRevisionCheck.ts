@@ -3,8 +3,8 @@ import { computed, toValue, type MaybeRefOrGetter } from 'vue'
 import { buildDocumentSchema, type BuildDocument } from '#shared/build/document.ts'
 import { check } from '#shared/check/check.ts'
 import type { CheckResult } from '#shared/check/result.ts'
-import type { Revision } from '#shared/contract/build.ts'
-import { readRevision } from '../api/builds.ts'
+import type { Revision } from '#shared/contract/revisions.ts'
+import { readRevision } from '../api/revisions.ts'
 import { useCatalog } from './useCatalog.ts'
 
 /** One revision of a build, read and judged. */

@@ -1,9 +1,11 @@
 import { randomUUID } from 'node:crypto'
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest'
 import { buildDocumentSchema, type BuildDocument } from '#shared/build/document.ts'
-import { openBuildSchema, revisionSchema, saveAnswerSchema, saveConflictSchema } from '#shared/contract/build.ts'
+import { openBuildSchema, saveAnswerSchema, saveConflictSchema } from '#shared/contract/build.ts'
 import { problemSchema } from '#shared/contract/problems.ts'
-import { BuildMember, BuildRevision } from '../../server/models/index.ts'
+import { revisionSchema } from '#shared/contract/revisions.ts'
+import { BuildMember } from '../../server/models/index.ts'
+import { readDocument } from '../../server/services/revisionStore.ts'
 import { startApi, type Api, type Client } from './support/api.ts'
 import { addCable, cablesDocument, edit, note, save, serial } from './support/documents.ts'
 
@@ -94,8 +96,9 @@ describe('a save', () => {
     const { document, revision } = await newest()
     expect(revision).toBe(13)
     expect(document.parts).toHaveLength(16)
-    const revisions = await BuildRevision.findAll({ where: { buildId }, order: ['revision'] })
-    expect(revisions.map((row) => row.document.parts.length)).toEqual(Array.from({ length: 13 }, (_, i) => 4 + i))
+    const numbers = Array.from({ length: 13 }, (_, i) => i + 1)
+    const documents = await Promise.all(numbers.map((n) => readDocument(api.context.database, buildId, n)))
+    expect(documents.map(({ parts }) => parts.length)).toEqual(numbers.map((n) => 3 + n))
   })
 })
 
