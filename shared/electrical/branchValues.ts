@@ -24,16 +24,30 @@ export function branchCurrents(line: SolvedLine, branch: number, island: Island 
 export function branchRange(line: SolvedLine, branch: number, island: Island | undefined) {
   if (!island) return { low: nothing, high: nothing }
   const at = line.columns.branch[branch]!
-  return { low: peaks(line.low_A, at, island, 0), high: peaks(line.high.current_A, at, island, 0) }
+  return { low: peaks(line.low_A(), at, island, 0), high: peaks(line.high.current_A, at, island, 0) }
+}
+
+/** Largest magnitude of a branch at the high end of all figures, over all moments. */
+export function mostAtHigh({ columns, high }: SolvedLine, branch: number): number {
+  const { current_A } = high
+  let most = 0
+  for (let column = columns.branch[branch]!; column < columns.branch[branch + 1]!; column++) {
+    const current = Math.abs(current_A[column]!)
+    if (current > most) most = current
+  }
+  return most
 }
 
 /** The largest of each moment's columns, times `sense`; with sense 0 its magnitude. */
 function peaks(current_A: Float64Array, at: number, { first }: Island, sense: -1 | 0 | 1): number[] {
-  const largest = [0, 0, 0, 0, 0, 0]
+  const largest = new Array<number>(momentIds.length)
   for (let m = 0; m < momentIds.length; m++) {
+    const end = at + first[m + 1]!
     let most = current_A[at + first[m]!]!
-    for (let column = at + first[m]! + 1; column < at + first[m + 1]!; column++)
-      if (Math.abs(current_A[column]!) > Math.abs(most)) most = current_A[column]!
+    for (let column = at + first[m]! + 1; column < end; column++) {
+      const current = current_A[column]!
+      if (Math.abs(current) > Math.abs(most)) most = current
+    }
     // Adding zero turns a negative zero into a plain one.
     largest[m] = (sense === 0 ? Math.abs(most) : sense * most) + 0
   }

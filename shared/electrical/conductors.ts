@@ -1,10 +1,9 @@
 import type { Conductor, Model } from '../catalog/model.ts'
 import type { Settings } from '../build/document.ts'
-import type { Line } from '../quantity/rails.ts'
 import { chassisAmpacity } from './ampacity.ts'
 import { awgArea_mm2, gaugeOfArea, wireResistance_ohm } from './copper.ts'
 import { takeLimit, takeSize, type Taken } from './figures.ts'
-import { lineName } from './lines.ts'
+import { lineIndex, lineName } from './lines.ts'
 
 /** Resistance and limit of one conductor of a model. */
 export interface ConductorFigures {
@@ -71,18 +70,18 @@ function limitOf(conductor: Conductor, settings: Settings): Taken | null {
   }
 }
 
-/** Thinnest wire at each connector and line of a model, as "connector|line" to gauge. */
-export function gaugesAtConnectors(model: Model): ReadonlyMap<string, number> {
-  const thinnest = new Map<string, number>()
+/** Thinnest wire at each connector of a model, by line; -1 on lines where no gauge is given. */
+export function gaugesAtConnectors(model: Model): ReadonlyMap<string, readonly number[]> {
+  const thinnest = new Map<string, number[]>()
   for (const conductor of model.wiring) {
     const gauge = gaugeOf(conductor)
     if (gauge === undefined) continue
+    const line = lineIndex[conductor.line]
     for (const end of [conductor.from, conductor.to]) {
-      const key = gaugeKey(end, conductor.line)
-      thinnest.set(key, Math.max(gauge, thinnest.get(key) ?? 0))
+      const byLine = thinnest.get(end) ?? [-1, -1, -1, -1]
+      byLine[line] = Math.max(gauge, byLine[line]!)
+      thinnest.set(end, byLine)
     }
   }
   return thinnest
 }
-
-export const gaugeKey = (connector: string, line: Line): string => `${connector}|${line}`

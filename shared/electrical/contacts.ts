@@ -2,7 +2,8 @@ import type { ResolvedConnector, ResolvedJoint } from '../build/resolve.ts'
 import type { ConnectorType } from '../catalog/connectorType.ts'
 import type { Model } from '../catalog/model.ts'
 import type { Line } from '../quantity/rails.ts'
-import { gaugeKey, gaugesAtConnectors } from './conductors.ts'
+import { gaugesAtConnectors } from './conductors.ts'
+import { lineIndex } from './lines.ts'
 import { takeLimit, takeSize, type Taken } from './figures.ts'
 
 /** One mated contact of a joint: resistance new and aged, and what it may carry. */
@@ -21,59 +22,55 @@ export interface ContactFigures {
 const worstNew_mohm = 30
 const worstAged_mohm = 45
 
+type ByGauge = Map<number, ContactFigures>
+/** What was read of a pair of connector types, and of a model's wires: neither changes. */
+const mated = new WeakMap<ConnectorType, WeakMap<ConnectorType, ByGauge>>()
+const gauges = new WeakMap<Model, ReadonlyMap<string, readonly number[]>>()
+
 /**
- * Reads contacts. A contact's rating depends on the wire crimped into it: where the connector type lists ratings by
- * gauge, the thinnest wire on either side of the joint decides.
+ * Reads one contact of a joint. Its rating depends on the wire crimped into it: where the connector type lists ratings
+ * by gauge, the thinnest wire on either side of the joint decides.
  */
-export class ContactReader {
-  readonly #gauges = new Map<Model, ReadonlyMap<string, number>>()
-  readonly #ratings = new Map<ConnectorType, Map<number, Taken | null>>()
-  readonly #resistances = new Map<ConnectorType, { new_ohm: number; aged_ohm: number; about: boolean }>()
+export function readContact({ a, b }: ResolvedJoint, line: Line): ContactFigures {
+  const gauge = Math.max(gaugeAt(a, line), gaugeAt(b, line))
+  let withB = mated.get(a.type)
+  if (!withB) mated.set(a.type, (withB = new WeakMap()))
+  let byGauge = withB.get(b.type)
+  if (!byGauge) withB.set(b.type, (byGauge = new Map()))
+  let figures = byGauge.get(gauge)
+  if (!figures) byGauge.set(gauge, (figures = readPair(a.type, b.type, gauge)))
+  return figures
+}
 
-  read({ a, b }: ResolvedJoint, line: Line): ContactFigures {
-    const gauge = Math.max(this.#gaugeAt(a, line), this.#gaugeAt(b, line))
-    const ofA = this.#rating(a.type, gauge)
-    const ofB = this.#rating(b.type, gauge)
-    const a_A = ofA?.value ?? Infinity
-    const b_A = ofB?.value ?? Infinity
-    const weaker = a_A === b_A ? 'alike' : a_A < b_A ? 'a' : 'b'
-    const one = this.#resistance(a.type)
-    const other = this.#resistance(b.type)
-    return {
-      new_ohm: Math.max(one.new_ohm, other.new_ohm),
-      aged_ohm: Math.max(one.aged_ohm, other.aged_ohm),
-      rating: weaker === 'b' ? ofB : ofA,
-      weaker,
-      about: one.about || other.about,
-    }
+function readPair(a: ConnectorType, b: ConnectorType, gauge: number): ContactFigures {
+  const ofA = readRating(a, gauge)
+  const ofB = readRating(b, gauge)
+  const a_A = ofA?.value ?? Infinity
+  const b_A = ofB?.value ?? Infinity
+  const weaker = a_A === b_A ? 'alike' : a_A < b_A ? 'a' : 'b'
+  const one = readResistance(a)
+  const other = readResistance(b)
+  return {
+    new_ohm: Math.max(one.new_ohm, other.new_ohm),
+    aged_ohm: Math.max(one.aged_ohm, other.aged_ohm),
+    rating: weaker === 'b' ? ofB : ofA,
+    weaker,
+    about: one.about || other.about,
   }
+}
 
-  /** Thinnest wire of the part at this connector; -1 where its wires are not given. */
-  #gaugeAt({ part, connector }: ResolvedConnector, line: Line): number {
-    let gauges = this.#gauges.get(part.model)
-    if (!gauges) this.#gauges.set(part.model, (gauges = gaugesAtConnectors(part.model)))
-    return gauges.get(gaugeKey(connector.id, line)) ?? -1
-  }
+/** Thinnest wire of the part at this connector; -1 where its wires are not given. */
+function gaugeAt({ part, connector }: ResolvedConnector, line: Line): number {
+  let ofModel = gauges.get(part.model)
+  if (!ofModel) gauges.set(part.model, (ofModel = gaugesAtConnectors(part.model)))
+  return ofModel.get(connector.id)?.[lineIndex[line]] ?? -1
+}
 
-  #rating(type: ConnectorType, gauge: number): Taken | null {
-    let byGauge = this.#ratings.get(type)
-    if (!byGauge) this.#ratings.set(type, (byGauge = new Map()))
-    let rating = byGauge.get(gauge)
-    if (rating === undefined) byGauge.set(gauge, (rating = readRating(type, gauge)))
-    return rating
-  }
-
-  #resistance(type: ConnectorType): { new_ohm: number; aged_ohm: number; about: boolean } {
-    let read = this.#resistances.get(type)
-    if (!read) {
-      const { initial, endOfLife } = type.power!.contactResistance_mohm
-      const fresh = takeSize(initial, worstNew_mohm)
-      const aged = takeSize(endOfLife, Math.max(worstAged_mohm, fresh.value))
-      read = { new_ohm: fresh.value / 1000, aged_ohm: aged.value / 1000, about: fresh.about }
-      this.#resistances.set(type, read)
-    }
-    return read
-  }
+function readResistance({ power }: ConnectorType): { new_ohm: number; aged_ohm: number; about: boolean } {
+  const { initial, endOfLife } = power!.contactResistance_mohm
+  const fresh = takeSize(initial, worstNew_mohm)
+  const aged = takeSize(endOfLife, Math.max(worstAged_mohm, fresh.value))
+  return { new_ohm: fresh.value / 1000, aged_ohm: aged.value / 1000, about: fresh.about }
 }
 
 /** Rating of one contact with a wire of this gauge: the next thinner listed gauge, the thinnest where none is. */

@@ -27,6 +27,8 @@ export interface ContactLoad {
   current_A: PerMoment
   /** Magnitudes. */
   range_A: LoadRange
+  /** Never less than any moment at the high end: a quick look before the range is asked for. */
+  most_A: number
   /** With contacts as new. */
   resistance_ohm: number
   /** Sustained limit of all contacts together; null where the rating is unknown. */
@@ -49,6 +51,7 @@ export interface ConductorLoad {
   /** Signed along the conductor's `from` to `to`. */
   current_A: PerMoment
   range_A: LoadRange
+  most_A: number
   /** As it counts in the sums: zero where the supply's tolerance holds at the end of its own leads. */
   resistance_ohm: number
   /** What the whole conductor may carry; null where unknown or a board plane without a figure. */

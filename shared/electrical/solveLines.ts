@@ -16,8 +16,9 @@ export interface SolvedLine {
   stated: Solution
   /** Voltages with contacts at the end of their life. */
   aged_V: Float64Array
-  /** Currents with all loads at the low end of their figures, all of it with them at the high end. */
-  low_A: Float64Array
+  /** Currents with all loads at the low end of their figures: few verdicts ask for them. */
+  low_A: () => Float64Array
+  /** All of it with the loads at the high end. */
   high: Solution
   /** 1 for branches whose current rests on an unknown or guessed figure. */
   about: Uint8Array
@@ -37,7 +38,7 @@ export function solveLines(
     return drawn
   }
   const stated = drawnIn('value')
-  const low = drawnIn('low')
+  let drawnLow: Float64Array[] | undefined
   const high = drawnIn('high')
   const guessed = markGuessed(draws, byLine)
 
@@ -50,6 +51,7 @@ export function solveLines(
     const meshed = topology.core.length > 0
     const again = meshed ? stated[i]!.slice() : null
     const first = solveNetwork(topology, at, new_ohm, held_V, stated[i]!)
+    let low: Float64Array | undefined
     return {
       network,
       columns: at,
@@ -57,7 +59,7 @@ export function solveLines(
       aged_V: again
         ? solveNetwork(topology, at, aged_ohm, held_V, again).voltage_V
         : voltagesOf(topology, at, aged_ohm, held_V, first.current_A),
-      low_A: solveNetwork(topology, at, new_ohm, held_V, low[i]!).current_A,
+      low_A: () => (low ??= solveNetwork(topology, at, new_ohm, held_V, (drawnLow ??= drawnIn('low'))[i]!).current_A),
       high: solveNetwork(topology, at, new_ohm, held_V, high[i]!),
       about: spreadAbout(network, guessed[i]!),
     }

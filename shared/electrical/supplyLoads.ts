@@ -4,7 +4,7 @@ import { momentIds } from '../check/result.ts'
 import { nominal_V } from '../quantity/rails.ts'
 import { islandOf } from './branchValues.ts'
 import type { Island, Islands } from './islands.ts'
-import type { StageStep, SupplyGroupLoad, SupplyRailLoad, SupplyTotalLoad } from './result.ts'
+import type { LoadRange, StageStep, SupplyGroupLoad, SupplyRailLoad, SupplyTotalLoad } from './result.ts'
 import type { SolvedLine } from './solveLines.ts'
 import type { StartPlan } from './startPlan.ts'
 
@@ -27,21 +27,32 @@ interface Outlet {
   output: number
   /** First column of the feeding branch. */
   at: number
-  current_A: Record<Scenario, Float64Array>
+  line: SolvedLine
 }
 
 type Scenario = 'stated' | 'low' | 'high'
-const scenarios: readonly Scenario[] = ['stated', 'low', 'high']
+
+const currentsOf = ({ stated, low_A, high }: SolvedLine, scenario: Scenario): Float64Array =>
+  scenario === 'low' ? low_A() : (scenario === 'high' ? high : stated).current_A
 
 /** Keeps the largest weighted sum of some outputs over the steps of each moment. */
 class Meter {
   readonly largest: Record<Scenario, number[]> = { stated: zeros(), low: zeros(), high: zeros() }
+  readonly range: LoadRange
   readonly #outputs: readonly number[]
   readonly #weights: readonly number[]
 
-  constructor(outputs: readonly number[], weights: readonly number[]) {
+  constructor(outputs: readonly number[], weights: readonly number[], readLow: () => void) {
     this.#outputs = outputs
     this.#weights = weights
+    const { low, high } = this.largest
+    this.range = {
+      get low() {
+        readLow()
+        return low
+      },
+      high,
+    }
   }
 
   read(now_A: Float64Array, moment: number, scenario: Scenario): void {
@@ -49,10 +60,6 @@ class Meter {
     for (let i = 0; i < this.#outputs.length; i++) sum += now_A[this.#outputs[i]!]! * this.#weights[i]!
     const kept = this.largest[scenario]
     if (sum > kept[moment]!) kept[moment] = sum
-  }
-
-  get range() {
-    return { low: this.largest.low, high: this.largest.high }
   }
 }
 
@@ -79,8 +86,19 @@ export function addUpSupplies(
   const outlets = outletsOf(solved, islands, outputs)
   const volts = outputs.map(({ rail }) => rail.setPoint_V.value ?? nominal_V[rail.rail])
   const meters: Meter[] = []
+  const readAll = (m: number, scenario: Scenario, visit?: (time: number, now_A: Float64Array) => void) =>
+    walk(islands.all, outlets, m, scenario, outputs.length, (time, now_A) => {
+      for (const each of meters) each.read(now_A, m, scenario)
+      visit?.(time, now_A)
+    })
+  let isLowRead = false
+  const readLow = () => {
+    if (isLowRead) return
+    isLowRead = true
+    momentIds.forEach((_, m) => readAll(m, 'low'))
+  }
   const meter = (members: readonly number[], weigh: (output: number) => number): Meter => {
-    const made = new Meter(members, members.map(weigh))
+    const made = new Meter(members, members.map(weigh), readLow)
     meters.push(made)
     return made
   }
@@ -109,13 +127,13 @@ export function addUpSupplies(
   })
 
   const timeline: StageStep[] = []
-  for (const [m, moment] of momentIds.entries())
-    for (const scenario of scenarios)
-      walk(islands.all, outlets, m, scenario, outputs.length, (time, now_A) => {
-        for (const each of meters) each.read(now_A, m, scenario)
-        if (plan.staged && moment === 'staged-start' && scenario === 'stated')
-          timeline.push({ from_s: time, starting: startingAt(plan, time), rails_A: now_A.slice() })
-      })
+  for (const [m, moment] of momentIds.entries()) {
+    const keep = plan.staged && moment === 'staged-start'
+    readAll(m, 'stated', (time, now_A) => {
+      if (keep) timeline.push({ from_s: time, starting: startingAt(plan, time), rails_A: now_A.slice() })
+    })
+    readAll(m, 'high')
+  }
   return { rails, groups, totals, timeline }
 }
 
@@ -123,14 +141,13 @@ export function addUpSupplies(
 function outletsOf(solved: readonly SolvedLine[], islands: Islands, outputs: readonly Output[]): Outlet[][] {
   const outlets: Outlet[][] = islands.all.map(() => [])
   for (const line of solved) {
-    const current_A = { stated: line.stated.current_A, low: line.low_A, high: line.high.current_A }
     line.network.branches.forEach((branch, i) => {
       if (branch.kind !== 'feed' || !branch.source.rail) return
       const { part, rail } = branch.source
       const output = outputs.findIndex((candidate) => candidate.part === part && candidate.rail === rail)
       const island = islandOf(line, i, islands)
       if (!island || output < 0) return
-      outlets[island.index]!.push({ output, at: line.columns.branch[i]!, current_A })
+      outlets[island.index]!.push({ output, at: line.columns.branch[i]!, line })
       if (line.about[i] === 1) outputs[output]!.about = true
     })
   }
@@ -149,8 +166,8 @@ function walk(
   const now_A = new Float64Array(outputs)
   const enter = (island: Island, step: number) => {
     const column = island.first[moment]! + step
-    for (const { output, at, current_A } of outlets[island.index]!) {
-      const currents = current_A[scenario]
+    for (const { output, at, line } of outlets[island.index]!) {
+      const currents = currentsOf(line, scenario)
       now_A[output]! += currents[at + column]!
       if (step > 0) now_A[output]! -= currents[at + column - 1]!
     }

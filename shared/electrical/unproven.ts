@@ -44,12 +44,12 @@ export function unprovenHops({ power, build }: Context): UnprovenHop[] {
 const none: UnprovenHop[] = []
 
 function ofContact(power: PowerResult, contact: ContactLoad, allowance: number): UnprovenHop[] {
-  const { limit_A, limitLow_A, current_A, range_A, rating } = contact
-  if (current_A === nothing) return none
+  const { limit_A, limitLow_A, current_A, rating } = contact
+  if (current_A === nothing || (limitLow_A !== null && contact.most_A <= limitLow_A)) return none
   const turn =
     limit_A === null || limitLow_A === null
       ? turnOfUnknown(power, current_A)
-      : turnOf(power, current_A, range_A, limit_A, limitLow_A, allowance)
+      : turnOf(power, current_A, contact.range_A, limit_A, limitLow_A, allowance)
   if (!turn) return none
   const figure: Figure | null =
     turn.turns === 'limit-unknown'
@@ -59,9 +59,9 @@ function ofContact(power: PowerResult, contact: ContactLoad, allowance: number):
 }
 
 function ofWire(power: PowerResult, wire: ConductorLoad, allowance: number): UnprovenHop[] {
-  const { limit_A, limitLow_A, current_A, range_A, ampacity } = wire
-  if (limit_A === null || limitLow_A === null || current_A === nothing) return none
-  const turn = turnOf(power, current_A, range_A, limit_A, limitLow_A, allowance)
+  const { limit_A, limitLow_A, current_A, ampacity } = wire
+  if (limit_A === null || limitLow_A === null || current_A === nothing || wire.most_A <= limitLow_A) return none
+  const turn = turnOf(power, current_A, wire.range_A, limit_A, limitLow_A, allowance)
   if (!turn) return none
   const draws = power.behind(wire.conductor.line, wire.branch)
   const figure = deciding(power, draws, turn.moment, limit_A - limitLow_A, ampacity)
