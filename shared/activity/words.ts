@@ -1,4 +1,5 @@
 import type { Author, Happening } from '../contract/activity.ts'
+import type { Notice } from '../contract/notifications.ts'
 
 /** What somebody whose account or link is gone is called. */
 export const formerName = 'Former member'
@@ -74,4 +75,17 @@ export function activitySentence(by: Author, what: Happening): string {
   if (what.kind === 'member-left' && by.kind === 'member' && by.userId === what.userId)
     return `${authorWords(by)} left the build`
   return `${authorWords(by)} ${happeningWords(what)}`
+}
+
+/** A notification in words, to the person who is told. */
+export function noticeSentence({ reason, activity }: Pick<Notice, 'reason' | 'activity'>): string {
+  const who = authorWords(activity.by)
+  const { what } = activity
+  if (reason === 'mention' && what.kind === 'comment-added')
+    return `${who} mentioned you in the comments on ${what.about}${quoted(what.excerpt)}`
+  if (reason === 'review-asked' && what.kind === 'round-asked')
+    return `${who} asked you to review revision ${what.revision}${quoted(what.question)}`
+  if (what.kind === 'role-changed') return `${who} made you ${what.role}`
+  if (what.kind === 'ownership-transferred') return `${who} handed the build over to you`
+  return activitySentence(activity.by, what)
 }

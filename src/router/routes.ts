@@ -50,6 +50,19 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Account' },
   },
   {
+    path: '/notifications',
+    name: 'notifications',
+    component: () => import('../views/NotificationsView.vue'),
+    meta: { title: 'Notifications' },
+  },
+  {
+    path: clientPaths.unsubscribe(':token'),
+    name: 'unsubscribe',
+    component: () => import('../views/UnsubscribeView.vue'),
+    props: true,
+    meta: { title: 'Mail switched off', access: 'anybody' },
+  },
+  {
     path: '/builds',
     name: 'builds',
     component: () => import('../views/BuildsView.vue'),

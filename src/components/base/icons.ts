@@ -3,6 +3,7 @@ export const icons = {
   archive: 'M2 3h12v3H2zM3 6v7h10V6M6 9h4',
   back: 'M10 3 5 8l5 5',
   bays: 'M3 2h10v3.4H3zM3 6.3h10v3.4H3zM3 10.6h10V14H3z',
+  bell: 'M3.5 11.5h9L11.3 10V7a3.3 3.3 0 0 0-6.6 0v3zM6.7 13.8h2.6M8 3.7V2.4',
   check: 'm3 8.5 3.2 3L13 4.5',
   close: 'm4 4 8 8M12 4l-8 8',
   copy: 'M5.5 5.5h8v8h-8zM10.5 5.5v-3h-8v8h3',
