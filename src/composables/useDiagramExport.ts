@@ -1,4 +1,6 @@
 import { ref } from 'vue'
+import type { ReviewState } from '#shared/contract/reviewState.ts'
+import { approvalWords, checkedWords } from '#shared/review/words.ts'
 import { useChecksStore } from '../stores/checks.ts'
 import { useDiagramStore } from '../stores/diagram.ts'
 import { useAttempt } from './useAttempt.ts'
@@ -10,6 +12,13 @@ export function isoDay(now: Date): string {
   return `${now.getFullYear()}-${two(now.getMonth() + 1)}-${two(now.getDate())}`
 }
 
+/** What the title block says of the review at a revision. */
+export function reviewOf(review: ReviewState | null, revision: number): { checked: string; approval?: string } {
+  const approval = review?.approval ?? null
+  const checked = checkedWords(review, revision)
+  return approval && revision >= approval.revision ? { checked, approval: approvalWords(approval) } : { checked }
+}
+
 /** "reel-vault-north-room-revision-14.png" */
 export const pictureName = (build: string, revision: string, ending: string): string =>
   fileName(revision === '' ? `${build} wiring` : `${build} revision ${revision}`, ending)
@@ -18,7 +27,7 @@ export const pictureName = (build: string, revision: string, ending: string): st
  * The whole diagram as a picture: one flat sheet drawn from the document, downloaded as SVG or as PNG. What draws it
  * is fetched when it is first asked for.
  */
-export function useDiagramExport(revision: () => string = () => '') {
+export function useDiagramExport(revision: () => string = () => '', review: () => ReviewState | null = () => null) {
   const diagram = useDiagramStore()
   const checks = useChecksStore()
   const attempt = useAttempt()
@@ -42,6 +51,7 @@ export function useDiagramExport(revision: () => string = () => '') {
       moment,
       revision: revision() || 'not saved',
       date: isoDay(new Date()),
+      ...reviewOf(review(), Number(revision())),
       fontCss: await fontCss(),
     })
   }

@@ -31,6 +31,8 @@ export interface FlatInput {
   date: string
   /** State of review in words, as "approved in round 2". */
   checked?: string
+  /** Who approved which revision, and whether that still holds: a line of its own in the title block. */
+  approval?: string
   /** Fits the sheet to a page; without, the picture is as large as the drawing. */
   paper?: PaperSize
   /** `@font-face` rules that carry Noto Sans with them, so that the picture looks the same everywhere. */
@@ -171,7 +173,7 @@ function header({ document, result, revision, date }: FlatInput, moment: string,
 }
 
 function lowerBand(input: FlatInput, reading: Reading, moment: string, width: number): Block[] {
-  const { document, build, result, revision, date, checked = 'not reviewed' } = input
+  const { document, build, result, revision, date, checked = 'not reviewed', approval } = input
   const cases = build.parts.filter((part) => part.model.kind === 'case')
   const blocksWith = (parts: Block) => [
     findingsBlock(result),
@@ -179,7 +181,7 @@ function lowerBand(input: FlatInput, reading: Reading, moment: string, width: nu
     parts,
     legend(),
     titleBlock(
-      { name: document.name, machine: document.machine, revision: String(revision), date, moment, checked },
+      { name: document.name, machine: document.machine, revision: String(revision), date, moment, checked, approval },
       result,
     ),
   ]

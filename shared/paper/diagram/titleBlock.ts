@@ -11,6 +11,8 @@ export interface Identity {
   date: string
   moment: string
   checked: string
+  /** The approval in a sentence; the line is left out without one. */
+  approval?: string | undefined
 }
 
 /** "yes", "yes, 2 cautions", "no: 1 danger, 3 faults" */
@@ -23,6 +25,15 @@ export function withinLimits({ counts }: CheckResult): { words: string; isWithin
   return { words: counts.caution > 0 ? `yes, ${counted(counts.caution, 'caution')}` : 'yes', isWithin: true }
 }
 
+interface Field {
+  label: string
+  value: string
+  x: number
+  row: number
+  width: number
+  fill?: string
+}
+
 const width = 560
 const rowHeight = 52
 
@@ -30,7 +41,7 @@ const rowHeight = 52
 export function titleBlock(identity: Identity, result: CheckResult): Block {
   const limits = withinLimits(result)
   const machine = identity.machine ? `${identity.name} (${identity.machine})` : identity.name
-  const fields = [
+  const fields: Field[] = [
     { label: 'Machine', value: machine, x: 0, row: 0, width: 344 },
     { label: 'Revision', value: identity.revision, x: 344, row: 0, width: 104 },
     { label: 'Date', value: identity.date, x: 448, row: 0, width: 112 },
@@ -45,15 +56,21 @@ export function titleBlock(identity: Identity, result: CheckResult): Block {
       fill: limits.isWithin ? palette.accent : palette.danger,
     },
   ]
+  const approval: Field[] = identity.approval
+    ? [{ label: 'Approval', value: identity.approval, x: 0, row: 2, width }]
+    : []
+  const rows = 2 + approval.length
   return {
     width,
-    height: 2 * rowHeight,
+    height: rows * rowHeight,
     draw: (x, y) =>
       group({}, [
-        box(x, y, width, 2 * rowHeight, { fill: palette.card, stroke: palette.ink, strokeWidth: 1.5 }),
-        line(x, y + rowHeight, x + width, y + rowHeight, palette.ink),
+        box(x, y, width, rows * rowHeight, { fill: palette.card, stroke: palette.ink, strokeWidth: 1.5 }),
+        ...Array.from({ length: rows - 1 }, (_, i) => (i + 1) * rowHeight).map((down) =>
+          line(x, y + down, x + width, y + down, palette.ink),
+        ),
         ...fields.filter((field) => field.x > 0).map((field) => divider(x + field.x, y + field.row * rowHeight)),
-        ...fields.flatMap(({ label, value, x: left, row, width: room, fill }) => [
+        ...[...fields, ...approval].flatMap(({ label, value, x: left, row, width: room, fill }) => [
           text(x + left + 10, y + row * rowHeight + 18, label, { size: 10.5, fill: palette.soft, width: room - 16 }),
           text(x + left + 10, y + row * rowHeight + 39, value, {
             size: 14,

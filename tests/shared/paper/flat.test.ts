@@ -43,6 +43,13 @@ describe('the sheet of ten drives', () => {
     )
   })
 
+  it('says who approved which revision, on a line of its own, where anybody did', () => {
+    const approval = 'Approved at revision 14 by Noor Castellan'
+    const approved = wordsOf(sheetOf(samples.tenDrives, { checked: 'approved at revision 14', approval }))
+    expect(approved).toContain(approval)
+    expect(words).not.toContain('Approval')
+  })
+
   it('says whether all is within the stated limits, and never that it is safe', () => {
     expect(words).toContain('no: 1 fault')
     expect(svg).not.toMatch(/\bsafe\b/i)

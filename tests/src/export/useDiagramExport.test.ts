@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { isoDay, pictureName } from '../../../src/composables/useDiagramExport.ts'
+import { isoDay, pictureName, reviewOf } from '../../../src/composables/useDiagramExport.ts'
 import { pixelRatio, sizeOf } from '../../../src/diagram/picture/rasterise.ts'
 
 describe('the name of a picture', () => {
@@ -11,6 +11,30 @@ describe('the name of a picture', () => {
 
   it('does without a revision before the first save', () =>
     expect(pictureName('Reel vault', '', 'svg')).toBe('reel-vault-wiring.svg'))
+})
+
+describe('what a picture says of the review', () => {
+  const approval = {
+    round: 2,
+    revision: 12,
+    by: [{ name: 'Noor Castellan', guest: false }],
+    at: '2026-12-01T10:00:00.000Z',
+    lapsedRevision: 15,
+  }
+
+  it('is nothing but that before anybody was asked', () =>
+    expect(reviewOf(null, 3)).toEqual({ checked: 'not reviewed' }))
+
+  it('is the approval of its revision, and that it lapsed once the plan moved on', () => {
+    expect(reviewOf({ approval, open: null }, 16)).toEqual({
+      checked: 'approval of revision 12 lapsed',
+      approval: 'Approval lapsed at revision 15: approved at revision 12 by Noor Castellan',
+    })
+    expect(reviewOf({ approval, open: null }, 11)).toEqual({ checked: 'not reviewed' })
+  })
+
+  it('has no approval while edits wait to be saved', () =>
+    expect(reviewOf({ approval, open: null }, NaN)).toEqual({ checked: 'not reviewed' }))
 })
 
 describe('the date on a picture', () => {

@@ -22,6 +22,7 @@ const build: BuildSummary = {
     { name: 'Irma Solberg', role: 'owner' },
     { name: 'Teo Marchetti', role: 'editor' },
   ],
+  review: { approval: null, open: null },
 }
 
 const show = async (more: Partial<BuildSummary> = {}) => {
@@ -46,6 +47,19 @@ describe('the list of builds', () => {
     const none = { danger: 0, fault: 0, caution: 0, note: 0 }
     expect((await show({ parts: 0, worst: null, counts: none })).get('.state').text()).toBe('nothing drawn yet')
     expect((await show({ worst: null, counts: none })).get('td.state').text()).toBe('within the stated limits')
+  })
+
+  it('shows an approval with its revision, and that it lapsed', async () => {
+    const by = [{ name: 'Noor Castellan', guest: false }]
+    const approval = { round: 1, revision: 12, by, at: build.changedAt, lapsedRevision: null }
+    const state = async (review: BuildSummary['review']) => (await show({ review })).get('td.state').text()
+    expect(await state({ approval, open: null })).toContain('approved at revision 12')
+    expect(await state({ approval: { ...approval, lapsedRevision: 14 }, open: null })).toContain(
+      'approval of revision 12 lapsed',
+    )
+    const open = { round: 2, revision: 14, changesAsked: true }
+    expect(await state({ approval: null, open })).toContain('changes asked, round 2, revision 14')
+    expect(await state({ approval: null, open: null })).not.toContain('revision')
   })
 
   it('marks the column it is sorted by and sorts by another on a press', async () => {
