@@ -7,12 +7,7 @@ import {
   madeLinkSchema,
   makeLinkRequestSchema,
 } from '#shared/contract/buildLinks.ts'
-import {
-  deleteBuildGuest,
-  deleteBuildLink,
-  postBuildLink,
-  readBuildLinks,
-} from '../controllers/buildLinkController.ts'
+import { deleteBuildGuest, deleteBuildLink, postBuildLink, readBuildLinks } from '../controllers/buildLinkController.ts'
 import { deleteGuest, postGuest, readLink } from '../controllers/guestController.ts'
 import { buildParams, guestParams, linkParams, tokenParams } from './params.ts'
 import { defineRoute } from './route.ts'
