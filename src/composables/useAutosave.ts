@@ -39,6 +39,8 @@ export function useAutosave(buildId: string) {
   const clashes = shallowRef<readonly Clash[]>([])
   let saver: Saver | null = null
   let theirs: BuildDocument | null = null
+  /** What to say of a change that one made on the server oneself, in place of "somebody else". */
+  let ownWords: string | null = null
   let closed = false
   /** Newest revision that is known to exist, and who saved it. */
   let newest = { revision: 0, by: null as string | null }
@@ -164,8 +166,29 @@ export function useAutosave(buildId: string) {
     await saver.settle(theirs, settleEdits(theirs, mine, saver.pending(), choices))
   }
 
+  /**
+   * Carries out what changes the build on the server beside the edits, as restoring a revision: what waits is sent first,
+   * and the result comes in as one's own work, which can be undone.
+   */
+  async function carryOut(words: string, act: (base: number) => Promise<unknown>): Promise<void> {
+    await saver?.flush()
+    if (!saver || saver.unsaved() > 0 || !diagram.document)
+      throw new Error('Some of your changes are not saved yet. Try again when they are.')
+    const before = diagram.document
+    ownWords = words
+    try {
+      await act(saver.state().revision)
+      await saver.refresh()
+      diagram.remember(words, before)
+      channel.postMessage('saved')
+    } finally {
+      ownWords = null
+    }
+  }
+
   function tellDropped(dropped: readonly DroppedChange[]): void {
     const [first] = dropped
+    if (ownWords !== null && !first) return diagram.say(`${ownWords}.`)
     const who = newest.by ?? 'Somebody else'
     if (first) diagram.say(`${who} changed this build. "${first.edit}" no longer fits (${first.reason}).`, 'refusal')
     else diagram.say(`${who} changed this build: their changes are in.`)
@@ -200,6 +223,7 @@ export function useAutosave(buildId: string) {
     open,
     settle,
     see,
+    carryOut,
     retry: () => saver?.flush(),
     discard: async () => {
       try {

@@ -1,5 +1,6 @@
 import { defineStore } from 'pinia'
 import { computed, ref, shallowRef } from 'vue'
+import { changesBetween } from '#shared/build/changesBetween.ts'
 import type { Edit } from '#shared/build/changes.ts'
 import type { BuildDocument } from '#shared/build/document.ts'
 import type { EditOutcome } from '#shared/build/edits/outcome.ts'
@@ -102,6 +103,13 @@ export const useDiagramStore = defineStore('diagram', () => {
     document.value = next
   }
 
+  /** Makes what was done on the server a step that can be undone: the way back to the document before. */
+  function remember(label: string, before: BuildDocument): void {
+    if (!document.value) return
+    const changes = changesBetween(document.value, before)
+    if (changes.length > 0) history.value = { back: [...history.value.back, { label, changes }], forth: [] }
+  }
+
   function onEdit(listener: Listener): () => void {
     listeners.add(listener)
     return () => listeners.delete(listener)
@@ -126,6 +134,7 @@ export const useDiagramStore = defineStore('diagram', () => {
     undo: () => travel(stepBack),
     redo: () => travel(stepForth),
     replace,
+    remember,
     onEdit,
   }
 })

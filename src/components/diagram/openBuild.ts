@@ -8,6 +8,11 @@ export interface OpenBuildContext {
   /** As the server gave it when the build was opened; null while it cannot be reached. */
   summary: Readonly<ShallowRef<OpenBuild | null>>
   state: Readonly<Ref<SaveState | null>>
+  /**
+   * Carries out what changes the build on the server beside the edits; `words` name it, for the undo too. Absent where
+   * the build only stands there to be read.
+   */
+  carryOut?: (words: string, act: (base: number) => Promise<unknown>) => Promise<void>
 }
 
 export const openBuildKey: InjectionKey<OpenBuildContext> = Symbol('open build')

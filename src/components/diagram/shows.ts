@@ -21,6 +21,7 @@ const faces = [
   { id: 'joints', label: 'Joints', component: defineAsyncComponent(() => import('./JointsTable.vue')) },
   { id: 'findings', label: 'Findings' },
   { id: 'bays', label: 'Bays', component: defineAsyncComponent(() => import('../drives/BayList.vue')) },
+  { id: 'history', label: 'History', component: defineAsyncComponent(() => import('../history/BuildHistory.vue')) },
   { id: 'review', label: 'Review', component: defineAsyncComponent(() => import('../review/ReviewFace.vue')) },
 ] as const satisfies readonly Face[]
 
