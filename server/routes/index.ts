@@ -5,6 +5,7 @@ import { catalogRoutes } from './catalog.ts'
 import { checkRoutes } from './checks.ts'
 import { healthRoutes } from './health.ts'
 import { invitationRoutes } from './invitations.ts'
+import { labelRoutes } from './labels.ts'
 import { liveRoutes } from './live.ts'
 import { mailboxRoutes } from './mailbox.ts'
 import { mailChoiceRoutes } from './mailChoices.ts'
@@ -30,6 +31,7 @@ const resources: readonly AnyRoute[] = [
   ...invitationRoutes,
   ...buildLinkRoutes,
   ...roundRoutes,
+  ...labelRoutes,
   ...liveRoutes,
   ...catalogRoutes,
   ...ownModelRoutes,

@@ -103,6 +103,7 @@ const expectedPolicies: Readonly<Record<string, PolicyName>> = {
   'get /api/links/:token': 'anybody',
   'post /api/links/:token/guests': 'anybody',
   'delete /api/guest': 'anybody',
+  'post /api/builds/:buildId/labels': 'see-build',
   'get /api/builds/:buildId/events': 'see-build',
   'put /api/builds/:buildId/presence': 'see-build',
   'get /api/builds/:buildId/activity': 'see-build',
