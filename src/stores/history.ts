@@ -2,10 +2,13 @@ import { apply, ChangeError } from '#shared/build/apply.ts'
 import type { Change, Edit } from '#shared/build/changes.ts'
 import type { BuildDocument } from '#shared/build/document.ts'
 import { invert } from '#shared/build/invert.ts'
+import { same } from '#shared/build/same.ts'
 
 interface Step {
   label: string
   changes: Change[]
+  /** The way back from `changes`, as things stood when the step was made: other than now where others came since. */
+  opposite: Change[]
   /** Edits of one gesture, as typing in one field, become one step. */
   gesture?: string
 }
@@ -31,16 +34,21 @@ export function perform(document: BuildDocument, history: History, edit: Edit, g
   const way = invert(document, edit.changes)
   const last = history.back.at(-1)
   const joined = gesture !== undefined && last?.gesture === gesture && history.forth.length === 0
+  const changes = joined ? [...way, ...last.changes] : way
   const step: Step = {
     label: edit.label,
-    changes: joined ? [...way, ...last.changes] : way,
+    changes,
+    opposite: invert(next, changes),
     ...(gesture !== undefined && { gesture }),
   }
   const back = joined ? history.back.slice(0, -1) : history.back
   return { document: next, history: { back: [...back, step], forth: [] }, edit }
 }
 
-/** Why a step cannot be taken: its subject was changed by somebody else. The step is dropped. */
+/**
+ * Why a step cannot be taken: somebody else changed its subject since, and going back would undo their work with one's
+ * own. The step is dropped.
+ */
 export interface Stuck {
   history: History
   reason: string
@@ -56,8 +64,10 @@ function travel(document: BuildDocument, history: History, way: 'back' | 'forth'
   const shorter = history[way].slice(0, -1)
   try {
     const next = apply(document, step.changes)
-    const opposite: Step = { label: step.label, changes: invert(document, step.changes) }
-    const moved = { [way]: shorter, [other]: [...history[other], opposite] } as unknown as History
+    const changes = invert(document, step.changes)
+    if (!same(changes, step.opposite)) return stuck(step, history, way, 'it is no longer as you left it')
+    const back: Step = { label: step.label, changes, opposite: invert(next, changes) }
+    const moved = { [way]: shorter, [other]: [...history[other], back] } as unknown as History
     return {
       document: next,
       history: moved,
@@ -65,10 +75,14 @@ function travel(document: BuildDocument, history: History, way: 'back' | 'forth'
     }
   } catch (error) {
     if (!(error instanceof ChangeError)) throw error
-    const verb = way === 'back' ? 'undone' : 'redone'
-    return {
-      history: { ...history, [way]: shorter },
-      reason: `"${step.label}" can no longer be ${verb}: somebody else changed it (${error.message}).`,
-    }
+    return stuck(step, history, way, error.message)
+  }
+}
+
+function stuck(step: Step, history: History, way: 'back' | 'forth', why: string): Stuck {
+  const verb = way === 'back' ? 'undone' : 'redone'
+  return {
+    history: { ...history, [way]: history[way].slice(0, -1) },
+    reason: `"${step.label}" can no longer be ${verb}: somebody else changed it (${why}).`,
   }
 }

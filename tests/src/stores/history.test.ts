@@ -72,4 +72,54 @@ describe('history', () => {
       reason: '"Note on c1" can no longer be undone: somebody else changed it (no part "c1").',
     })
   })
+
+  describe('with somebody else at work in the same build', () => {
+    const theirs: Edit = { label: 'Theirs', changes: [{ op: 'updatePart', id: 'c2', patch: { note: 'theirs' } }] }
+    const noteOf = (document: typeof first, id: string) => document.parts.find((part) => part.id === id)?.note
+
+    it("undoes and redoes one's own edits and leaves theirs alone", () => {
+      const mine = perform(first, emptyHistory, note('c1', 'mine'))
+      const merged = apply(mine.document, theirs.changes)
+      const back = undo(merged, mine.history)
+      if (!back || !('document' in back)) throw new Error('stuck')
+      expect([noteOf(back.document, 'c1'), noteOf(back.document, 'c2')]).toEqual([undefined, 'theirs'])
+      expect(back.edit.changes.every((change) => 'id' in change && change.id === 'c1')).toBe(true)
+      const forth = redo(back.document, back.history)
+      if (!forth || !('document' in forth)) throw new Error('stuck')
+      expect([noteOf(forth.document, 'c1'), noteOf(forth.document, 'c2')]).toEqual(['mine', 'theirs'])
+    })
+
+    it('another field of the same part stays theirs', () => {
+      const mine = perform(first, emptyHistory, note('c1', 'mine'))
+      const merged = apply(mine.document, [{ op: 'updatePart', id: 'c1', patch: { serial: 'THEIRS' } }])
+      const back = undo(merged, mine.history)
+      if (!back || !('document' in back)) throw new Error('stuck')
+      expect(back.document.parts.find((part) => part.id === 'c1')).toMatchObject({ serial: 'THEIRS' })
+      expect(noteOf(back.document, 'c1')).toBeUndefined()
+    })
+
+    it('does not undo what they made of it since, and goes on with the step before', () => {
+      let mine = perform(first, emptyHistory, note('c2', 'early'))
+      mine = perform(mine.document, mine.history, note('c1', 'mine'))
+      const merged = apply(mine.document, note('c1', 'theirs, later').changes)
+      const back = undo(merged, mine.history)
+      if (!back || 'document' in back) throw new Error('their work was undone')
+      expect(back.reason).toBe(
+        '"Note on c1" can no longer be undone: somebody else changed it (it is no longer as you left it).',
+      )
+      const before = undo(merged, back.history)
+      if (!before || !('document' in before)) throw new Error('stuck')
+      expect([noteOf(before.document, 'c1'), noteOf(before.document, 'c2')]).toEqual(['theirs, later', undefined])
+    })
+
+    it('does not take away a part that they have changed since it was added', () => {
+      const part = { id: 'n1', model: 'lead-4', ref: 'W9' } as const
+      const mine = perform(first, emptyHistory, { label: 'Add W9', changes: [{ op: 'addPart', part }] })
+      const untouched = undo(mine.document, mine.history)
+      expect(untouched && 'document' in untouched).toBe(true)
+      const merged = apply(mine.document, note('n1', 'theirs').changes)
+      const back = undo(merged, mine.history)
+      expect(back && 'reason' in back).toBe(true)
+    })
+  })
 })
