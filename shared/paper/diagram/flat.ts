@@ -102,7 +102,8 @@ function sheet(name: string, width: number, height: number, content: readonly st
   )
 }
 
-function drawDiagram(build: ResolvedBuild, drawing: Drawing, reading: Reading): string[] {
+/** The diagram alone, in the units of its arrangement. */
+export function drawDiagram(build: ResolvedBuild, drawing: Drawing, reading: Reading): string[] {
   const of = (kind: DrawnNode['kind']) => drawing.nodes.filter((node) => node.kind === kind)
   const cases = of('case')
   const frames = [...cases, ...of('backplane')]

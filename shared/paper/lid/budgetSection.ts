@@ -1,0 +1,93 @@
+import type { PageMark } from '../page.ts'
+import type { LidBudget, LidContent, LidLoad } from './content.ts'
+import type { Section } from './strips.ts'
+import type { Look } from './style.ts'
+import { tableHead, tableRow, type Column } from './table.ts'
+
+/** Load, limit and what is left of every rail and lead, at its worst start and its worst running moment. */
+export function budgetSection(look: Look, { budgets, startMoments }: LidContent, width: number): Section[] {
+  if (budgets.length === 0) return []
+  const withBar = width > 95
+  const bar = withBar ? 16 : 0
+  const name = (width - bar) * 0.34
+  const rest = (width - bar - name) / 4
+  const columns: Column[] = [
+    { title: 'Rail or lead', width: name, weight: 600 },
+    { title: 'at start', width: rest * 1.25, isRight: true },
+    { title: 'left', width: rest * 0.75, isRight: true },
+    ...(withBar ? [{ title: 'share', width: bar }] : []),
+    { title: 'running', width: rest * 1.25, isRight: true },
+    { title: 'left', width: rest * 0.75, isRight: true },
+  ]
+  return [
+    {
+      title: `Budgets (start: ${startMoments})`,
+      head: tableHead(look, columns),
+      strips: budgets.flatMap((budget) => {
+        const worst = budget.start ?? budget.running
+        const isOver = overOf(budget.start) || overOf(budget.running)
+        return tableRow(look, columns, [
+          { words: budget.name, isStrong: isOver },
+          { words: loadWords(budget, budget.start), isStrong: overOf(budget.start) },
+          { words: leftWords(budget, budget.start), isStrong: overOf(budget.start) },
+          ...(withBar ? [{ words: '', draw: barOf(look, worst) }] : []),
+          { words: loadWords(budget, budget.running), isStrong: overOf(budget.running) },
+          { words: leftWords(budget, budget.running), isStrong: overOf(budget.running) },
+        ])
+      }),
+    },
+  ]
+}
+
+const number = (value: number, unit: LidBudget['unit']): string => value.toFixed(unit === 'W' ? 0 : 1)
+
+export const overOf = (load: LidLoad | null): boolean => load !== null && load.limit !== null && load.load > load.limit
+
+/** "about 8.0 of 4.5 A" */
+export function loadWords({ unit, about }: LidBudget, load: LidLoad | null): string {
+  if (!load) return '-'
+  const limit = load.limit === null ? '?' : number(load.limit, unit)
+  return `${about ? 'about ' : ''}${number(load.load, unit)} of ${limit} ${unit}`
+}
+
+/** "3.5 A", "over by 0.5 A", "limit unknown" */
+export function leftWords({ unit }: LidBudget, load: LidLoad | null): string {
+  if (!load) return ''
+  if (load.limit === null) return 'unknown'
+  const left = load.limit - load.load
+  return left < 0 ? `over ${number(-left, unit)} ${unit}` : `${number(left, unit)} ${unit}`
+}
+
+/** How much of the limit is used; what is over it runs out of the frame, hatched. */
+function barOf(look: Look, load: LidLoad | null) {
+  return (x: number, y: number, width: number, height: number): PageMark[] => {
+    if (!load || load.limit === null || load.limit === 0) return []
+    const room = width * 0.8
+    const share = load.load / load.limit
+    const isOver = share > 1
+    const bar = { y: y + height * 0.22, height: height * 0.5 }
+    return [
+      {
+        kind: 'box',
+        x,
+        ...bar,
+        width: Math.min(width, room * Math.min(share, 1.25)),
+        fill: isOver ? look.inks.danger : look.inks.ink,
+      },
+      { kind: 'box', x, ...bar, width: room, stroke: look.inks.ink, stroke_mm: 0.2 },
+      ...(isOver
+        ? [
+            {
+              kind: 'line' as const,
+              x1: x + room,
+              y1: bar.y - 0.5,
+              x2: x + room,
+              y2: bar.y + bar.height + 0.5,
+              width_mm: 0.5,
+              colour: look.inks.ink,
+            },
+          ]
+        : []),
+    ]
+  }
+}
