@@ -20,14 +20,18 @@ export interface Product {
   stop(): Promise<void>
 }
 
+/** Another server's database stays when this one goes. */
+const besideOf = ({ databaseUrl }: Product) => ({ url: databaseUrl, drop: () => Promise.resolve() })
+
 /**
  * The built product on a free port with a database of its own: catalog, demo accounts and examples loaded unless `demo` is false.
+ * With `beside`, a further server on the database of another.
  * Rate limits are widened, for a journey makes more requests a minute than a person; pass `RATE_LIMIT_FACTOR` to have them.
  */
 export async function startProduct(
-  options: { demo?: boolean; settings?: Record<string, string> } = {},
+  options: { demo?: boolean; settings?: Record<string, string>; beside?: Product } = {},
 ): Promise<Product> {
-  const database = await freshDatabase()
+  const database = options.beside ? besideOf(options.beside) : await freshDatabase()
   const folder = mkdtempSync(join(tmpdir(), 'bayloom-product-'))
   const log = join(folder, 'server.log')
   const port = await anyFreePort()

@@ -8,17 +8,21 @@ import { contentHash } from '../../server/services/contentHash.ts'
 import { startProduct, type Product } from '../helpers/server.ts'
 import { makeClient, type Client } from './support/api.ts'
 import { addCable, cablesDocument, edit, save } from './support/documents.ts'
+import { startMailSink, type MailSink } from './support/mailSink.ts'
 
 let product: Product
+let sink: MailSink
 let database: pg.Client
 beforeAll(async () => {
-  product = await startProduct({ demo: false })
+  sink = await startMailSink()
+  product = await startProduct({ demo: false, settings: { SMTP_URL: sink.url } })
   database = new pg.Client({ connectionString: product.databaseUrl })
   await database.connect()
 })
 afterAll(async () => {
   await database.end()
   await product.stop()
+  await sink.close()
 })
 
 async function register(): Promise<Client> {
@@ -37,29 +41,40 @@ interface Row {
   edits: Edit[]
 }
 
-test('a server killed during a hundred saves loses none that it acknowledged, leaves none half, and keeps sessions', async () => {
+/** How many saves are acknowledged before each kill, and at the end. */
+const goals = [30, 65, 100]
+
+test('a server killed during a hundred saves and invitations keeps what it acknowledged, loses no mail and sends none twice', async () => {
   const client = await register()
   const made = await client.post('/api/builds/import', { document: cablesDocument('Killed', 3) })
   const { id } = openBuildSchema.parse(made.body)
   const acknowledged = new Map<number, string>()
+  const invited = new Set<string>()
   let number = 10
+  let guest = 0
 
-  for (let round = 0; round < 2; round++) {
+  for (const goal of goals) {
     const { revision } = openBuildSchema.parse((await client.get(`/api/builds/${id}`)).body)
-    const goal = acknowledged.size + 45 + 10 * round
-    let killed: Promise<void> | undefined
+    let over: Promise<void> | undefined
     const saver = async () => {
-      while (!killed) {
+      while (!over) {
         const request = save(revision, edit(`Add W${++number}`, addCable(number)))
         const response = await client.post(`/api/builds/${id}/revisions`, request).catch(() => null)
         if (response?.status !== 201) continue
         acknowledged.set(saveAnswerSchema.parse(response.body).revision, request.requestId)
-        if (acknowledged.size >= goal) killed ??= product.kill()
+        if (acknowledged.size >= goal) over ??= goal === goals.at(-1) ? Promise.resolve() : product.kill()
       }
     }
-    await Promise.all([saver(), saver(), saver(), saver()])
-    await killed
-    await product.start()
+    const inviter = async () => {
+      while (!over) {
+        const email = `guest${++guest}@example.org`
+        const response = await client.post(`/api/builds/${id}/invitations`, { email, role: 'reader' }).catch(() => null)
+        if (response?.status === 201) invited.add(email)
+      }
+    }
+    await Promise.all([saver(), saver(), saver(), inviter()])
+    await over
+    if (goal !== goals.at(-1)) await product.start()
   }
 
   const rows = (
@@ -85,4 +100,22 @@ test('a server killed during a hundred saves loses none that it acknowledged, le
   expect(rows.at(-1)?.document).toEqual(document)
   const newest = await client.get(`/api/builds/${id}`)
   expect(openBuildSchema.parse(newest.body).revision).toBe(rows.length)
+  const told = await database.query<{ revision: number }>(
+    `SELECT (details ->> 'revision')::int AS revision FROM activity WHERE build_id = $1 AND kind = 'revision-saved' ORDER BY id`,
+    [id],
+  )
+  // The first revision is the import; each later one is told of once, in the order in which it came about.
+  expect(told.rows.map((row) => row.revision)).toEqual(rows.slice(1).map((row) => row.revision))
+
+  const waiting = async () =>
+    (await database.query("SELECT 1 FROM messages WHERE state <> 'sent' LIMIT 1")).rowCount ?? 0
+  await expect.poll(waiting, { timeout: 60_000, interval: 200 }).toBe(0)
+  const written = (await database.query<{ id: string; recipient: string }>('SELECT id, recipient FROM messages')).rows
+  const recipients = written.map((row) => row.recipient)
+  expect(new Set(recipients).size).toBe(recipients.length)
+  for (const email of invited) expect(recipients).toContain(email)
+  const ids = (list: readonly string[]) => [...new Set(list)].sort()
+  expect(ids(sink.taken.map((mail) => mail.messageId))).toEqual(ids(written.map((row) => `${row.id}@bayloom`)))
+  // A mail server may have taken the one mail over that was under way at a kill; it gets it again as the same mail.
+  expect(sink.taken.length - written.length).toBeLessThanOrEqual(goals.length - 1)
 }, 180_000)
