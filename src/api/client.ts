@@ -53,6 +53,11 @@ export async function requestNothing(method: Method, path: string, options: Requ
   await sendPatiently(method, path, options)
 }
 
+/** As `request`, where the answer is a file. */
+export async function requestFile(method: Method, path: string, options: RequestOptions = {}): Promise<Blob> {
+  return (await sendPatiently(method, path, options)).blob()
+}
+
 /** Sends; renews a stale token once, and asks to sign in again once, before giving the refusal to the caller. */
 async function sendPatiently(method: Method, path: string, options: RequestOptions): Promise<Response> {
   try {

@@ -23,6 +23,9 @@ export const labelSheetSchema = z.strictObject({
 })
 export type LabelSheet = z.infer<typeof labelSheetSchema>
 
+/** The measures alone, without what a listed sheet carries besides. */
+export const measuresOf = (sheet: LabelSheet): LabelSheet => labelSheetSchema.strip().parse(sheet)
+
 /** A sheet that ships with the product, and where its measures come from. */
 export interface KnownSheet extends LabelSheet {
   source: string

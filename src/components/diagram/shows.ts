@@ -23,6 +23,12 @@ const faces = [
   { id: 'bays', label: 'Bays', component: defineAsyncComponent(() => import('../drives/BayList.vue')) },
   { id: 'history', label: 'History', component: defineAsyncComponent(() => import('../history/BuildHistory.vue')) },
   { id: 'review', label: 'Review', component: defineAsyncComponent(() => import('../review/ReviewFace.vue')) },
+  {
+    id: 'labels',
+    label: 'Labels',
+    menu: 'Papers',
+    component: defineAsyncComponent(() => import('../labels/LabelsFace.vue')),
+  },
 ] as const satisfies readonly Face[]
 
 export type Show = (typeof faces)[number]['id']
