@@ -1,6 +1,6 @@
 import { fileURLToPath } from 'node:url'
 import type { TFontDictionary } from 'pdfmake/interfaces.js'
-import type { FontOf } from '#shared/paper/pageSvg.ts'
+import type { Weight } from '#shared/paper/text/notoSans.ts'
 
 /*
  * The font of the screen for PDFs. It comes in one file a script and weight; a text is set in as many of them as it needs.
@@ -15,29 +15,35 @@ const scripts = {
 type Script = keyof typeof scripts
 const scriptNames = Object.keys(scripts) as Script[]
 
-const fileOf = (script: Script, weight: number): string =>
-  fileURLToPath(import.meta.resolve(`@fontsource/noto-sans/files/noto-sans-${script}-${weight}-normal.woff`))
+const files = new Map<string, string>()
 
-/** Half-bold is a family of its own: a PDF library knows regular and bold only. */
-const familyOf = (script: Script, weight: number): string => `Noto Sans ${script}${weight === 600 ? ' half' : ''}`
+function fileOf(script: Script, weight: Weight): string {
+  const key = `${script}-${weight}`
+  const known = files.get(key)
+  if (known !== undefined) return known
+  const file = fileURLToPath(import.meta.resolve(`@fontsource/noto-sans/files/noto-sans-${key}-normal.woff`))
+  files.set(key, file)
+  return file
+}
 
-export const defaultFamily = familyOf('latin', 400)
+export const defaultFamily = 'Noto Sans'
 
-/** Font files by family, as pdfmake wants them. */
-export const paperFonts: TFontDictionary = Object.fromEntries(
-  scriptNames.flatMap((script) => [
-    [familyOf(script, 400), { normal: fileOf(script, 400), bold: fileOf(script, 700) }],
-    [familyOf(script, 600), { normal: fileOf(script, 600), bold: fileOf(script, 600) }],
-  ]),
-)
+/** What the PDF library sets by itself. Every text of a page names its own file. */
+export const paperFonts: TFontDictionary = {
+  [defaultFamily]: { normal: fileOf('latin', 400), bold: fileOf('latin', 700) },
+}
 
 /** The only files that the PDF library may read. */
-export const paperFontFiles: ReadonlySet<string> = new Set(
-  Object.values(paperFonts).flatMap((family) => Object.values(family).filter((file) => typeof file === 'string')),
-)
+export const paperFontFiles: ReadonlySet<string> = new Set([fileOf('latin', 400), fileOf('latin', 700)])
 
-/** What no shipped font has is set from the first one, which shows a box. */
-export const fontOf: FontOf = (character, weight) => {
-  const script = scriptNames.find((name) => scripts[name].test(character)) ?? 'latin'
-  return { family: familyOf(script, weight), weight: weight === 700 ? 700 : 400 }
+/** A line of text in pieces that one font can set. What no shipped font has is set from the first, which shows a box. */
+export function fontRuns(text: string, weight: Weight): { text: string; file: string }[] {
+  const runs: { text: string; script: Script }[] = []
+  for (const character of text) {
+    const script = scriptNames.find((name) => scripts[name].test(character)) ?? 'latin'
+    const last = runs.at(-1)
+    if (last?.script === script) last.text += character
+    else runs.push({ text: character, script })
+  }
+  return runs.map((run) => ({ text: run.text, file: fileOf(run.script, weight) }))
 }

@@ -1,17 +1,8 @@
-import { box, element, escapeXml, group } from './svg.ts'
+import { box, element, escapeXml } from './svg.ts'
 import { ink, pt_mm, type Page, type PageCode, type PageMark, type PagePath, type PageText } from './page.ts'
-import type { Weight } from './text/notoSans.ts'
-
-/** Name and weight of the font that has a character's shape, where one family does not have all of them. */
-export type FontOf = (character: string, weight: Weight) => { family: string; weight: 400 | 700 }
-
-export interface SvgOptions {
-  /** Absent: the page's own words for the whole family are enough, as in a browser. */
-  fontOf?: FontOf
-}
 
 /** One page as an SVG image whose unit is the millimetre: shown on screen, printed, and put into a PDF. */
-export function pageSvg(page: Page, { fontOf }: SvgOptions = {}): string {
+export function pageSvg(page: Page): string {
   const { width_mm: width, height_mm: height, title, marks } = page
   return element(
     'svg',
@@ -24,23 +15,18 @@ export function pageSvg(page: Page, { fontOf }: SvgOptions = {}): string {
       role: 'img',
       'aria-label': title,
     },
-    marks.map((mark) => markSvg(mark, fontOf)).join(''),
+    marks.map(markSvg).join(''),
   )
 }
 
-function textSvg(mark: PageText, fontOf: FontOf | undefined): string {
-  const weight = mark.weight ?? 400
-  const runs = fontOf ? runsOf(mark.text, weight, fontOf) : []
-  const [only] = runs
-  const font = only ?? { family: undefined, weight }
+function textSvg(mark: PageText): string {
   return element(
     'text',
     {
       x: mark.x,
       y: mark.y,
       'font-size': mark.size_pt * pt_mm,
-      'font-family': font.family,
-      'font-weight': font.weight === 400 ? undefined : font.weight,
+      'font-weight': mark.weight === 400 ? undefined : mark.weight,
       fill: mark.colour ?? ink,
       'text-anchor': mark.anchor === 'start' ? undefined : mark.anchor,
       transform: mark.turn ? `rotate(${mark.turn} ${mark.x} ${mark.y})` : undefined,
@@ -51,32 +37,14 @@ function textSvg(mark: PageText, fontOf: FontOf | undefined): string {
         'paint-order': 'stroke',
       }),
     },
-    runs.length > 1
-      ? runs
-          .map(({ family, weight: own, text }) =>
-            element('tspan', { 'font-family': family, 'font-weight': own }, escapeXml(text)),
-          )
-          .join('')
-      : escapeXml(mark.text),
+    escapeXml(mark.text),
   )
 }
 
-/** A line of text in pieces that one font can set. */
-function runsOf(text: string, weight: Weight, fontOf: FontOf): (ReturnType<FontOf> & { text: string })[] {
-  const runs: (ReturnType<FontOf> & { text: string })[] = []
-  for (const character of text) {
-    const font = fontOf(character, weight)
-    const last = runs.at(-1)
-    if (last && last.family === font.family) last.text += character
-    else runs.push({ ...font, text: character })
-  }
-  return runs
-}
-
-function markSvg(mark: PageMark, fontOf: FontOf | undefined): string {
+function markSvg(mark: PageMark): string {
   switch (mark.kind) {
     case 'text':
-      return textSvg(mark, fontOf)
+      return textSvg(mark)
     case 'line':
       return element('path', {
         d: `M${mark.x1} ${mark.y1}L${mark.x2} ${mark.y2}`,
@@ -99,7 +67,7 @@ function markSvg(mark: PageMark, fontOf: FontOf | undefined): string {
     case 'window': {
       const { x, y, width, height, marks } = mark
       const view = { x, y, width, height, viewBox: `${x} ${y} ${width} ${height}` }
-      return element('svg', view, marks.map((inner) => markSvg(inner, fontOf)).join(''))
+      return element('svg', view, marks.map(markSvg).join(''))
     }
   }
 }
@@ -115,10 +83,11 @@ const pathSvg = ({ d, fill = 'none', stroke, stroke_mm = 0.2, dash, round }: Pag
   })
 
 /** One path of unit squares: runs of dark modules in a row are joined, so that no hair shows between them. */
+export const codePath = (modules: PageCode['modules']): string => modules.map(rowPath).join('')
+
 function codeSvg({ x, y, size, modules }: PageCode): string {
   const unit = size / Math.max(1, modules.length)
-  const path = modules.map((row, r) => rowPath(row, r)).join('')
-  return group({ transform: `translate(${x} ${y}) scale(${unit})` }, [element('path', { d: path, fill: ink })])
+  return element('path', { d: codePath(modules), fill: ink, transform: `translate(${x} ${y}) scale(${unit})` })
 }
 
 function rowPath(row: readonly boolean[], r: number): string {

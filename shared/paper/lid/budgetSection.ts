@@ -2,22 +2,37 @@ import type { PageMark } from '../page.ts'
 import type { LidBudget, LidContent, LidLoad } from './content.ts'
 import type { Section } from './strips.ts'
 import type { Look } from './style.ts'
-import { tableHead, tableRow, type Column } from './table.ts'
+import { tableHead, tableRow, wish, type Column } from './table.ts'
 
 /** Load, limit and what is left of every rail and lead, at its worst start and its worst running moment. */
 export function budgetSection(look: Look, { budgets, startMoments }: LidContent, width: number): Section[] {
   if (budgets.length === 0) return []
-  const withBar = width > 95
-  const bar = withBar ? 16 : 0
-  const name = (width - bar) * 0.34
-  const rest = (width - bar - name) / 4
+  const { body_pt } = look.density
+  const wishes = [
+    wish([...budgets.map((budget) => loadWords(budget, budget.start)), 'at start'], body_pt),
+    wish(
+      budgets.map((budget) => leftWords(budget, budget.start)),
+      body_pt,
+    ),
+    wish([...budgets.map((budget) => loadWords(budget, budget.running)), 'running'], body_pt),
+    wish(
+      budgets.map((budget) => leftWords(budget, budget.running)),
+      body_pt,
+    ),
+  ] as const
+  const numbers = wishes.reduce((sum, one) => sum + one, 0)
+  const bar = width - numbers > 45 ? 13 : 0
+  const withBar = bar > 0
+  const name = Math.max(width * 0.24, width - numbers - bar)
+  const shrink = Math.min(1, (width - bar - name) / numbers)
+  const [atStart, leftAtStart, running, leftRunning] = wishes
   const columns: Column[] = [
     { title: 'Rail or lead', width: name, weight: 600 },
-    { title: 'at start', width: rest * 1.25, isRight: true },
-    { title: 'left', width: rest * 0.75, isRight: true },
+    { title: 'at start', width: atStart * shrink, isRight: true },
+    { title: 'left', width: leftAtStart * shrink, isRight: true },
     ...(withBar ? [{ title: 'share', width: bar }] : []),
-    { title: 'running', width: rest * 1.25, isRight: true },
-    { title: 'left', width: rest * 0.75, isRight: true },
+    { title: 'running', width: running * shrink, isRight: true },
+    { title: 'left', width: leftRunning * shrink, isRight: true },
   ]
   return [
     {
@@ -47,7 +62,7 @@ export const overOf = (load: LidLoad | null): boolean => load !== null && load.l
 export function loadWords({ unit, about }: LidBudget, load: LidLoad | null): string {
   if (!load) return '-'
   const limit = load.limit === null ? '?' : number(load.limit, unit)
-  return `${about ? 'about ' : ''}${number(load.load, unit)} of ${limit} ${unit}`
+  return `${about ? 'about\u00a0' : ''}${number(load.load, unit)} of\u00a0${limit}\u00a0${unit}`
 }
 
 /** "3.5 A", "over by 0.5 A", "limit unknown" */
@@ -55,7 +70,7 @@ export function leftWords({ unit }: LidBudget, load: LidLoad | null): string {
   if (!load) return ''
   if (load.limit === null) return 'unknown'
   const left = load.limit - load.load
-  return left < 0 ? `over ${number(-left, unit)} ${unit}` : `${number(left, unit)} ${unit}`
+  return left < 0 ? `over\u00a0${number(-left, unit)}\u00a0${unit}` : `${number(left, unit)}\u00a0${unit}`
 }
 
 /** How much of the limit is used; what is over it runs out of the frame, hatched. */

@@ -140,7 +140,7 @@ function sectionsOf(look: Look, { content, code }: LidParts, inner: number): Pla
   return [
     { kind: 'full', make: (width) => content.maps.flatMap((map) => mapSection(look, map, width)) },
     table,
-    ...pairs(budgets, (width) => [...handling(width), ...starts(width)], 0.58),
+    ...pairs(budgets, (width) => [...handling(width), ...starts(width)], 0.63),
     ...last,
   ]
 }

@@ -73,7 +73,7 @@ function pieces(word: string, width: number, size_pt: number, weight: Weight): s
 export function wrapAll(words: string, width: number, size_pt: number, weight: Weight = 400): string[] {
   const lines: string[] = []
   let current = ''
-  for (const word of words.split(/\s+/).filter(Boolean))
+  for (const word of words.split(/[^\S\u00a0]+/).filter(Boolean))
     for (const piece of pieces(word, width, size_pt, weight)) {
       const longer = current === '' ? piece : `${current} ${piece}`
       if (current === '' || widthOf(longer, size_pt, weight) <= width) current = longer
