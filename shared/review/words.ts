@@ -14,13 +14,20 @@ export function approvalWords({ revision, by, lapsedRevision }: Approval): strin
 export const approvalShort = ({ revision, lapsedRevision }: Approval): string =>
   lapsedRevision === null ? `approved at revision ${revision}` : `approval of revision ${revision} lapsed`
 
+/**
+ * What an approval means on a sheet that shows some revision: nothing on one that is older than what was approved, and not
+ * lapsed on one from before it lapsed.
+ */
+export function approvalAt(review: ReviewState | null, revision: number): Approval | null {
+  const approval = review?.approval ?? null
+  if (!approval || !(revision >= approval.revision)) return null
+  return revision < (approval.lapsedRevision ?? Infinity) ? { ...approval, lapsedRevision: null } : approval
+}
+
 /** The state of review in the title block of a paper that shows a revision. */
 export function checkedWords(review: ReviewState | null, revision: number): string {
-  const approval = review?.approval ?? null
-  if (approval && revision >= approval.revision)
-    return approvalShort(
-      revision < (approval.lapsedRevision ?? Infinity) ? { ...approval, lapsedRevision: null } : approval,
-    )
+  const approval = approvalAt(review, revision)
+  if (approval) return approvalShort(approval)
   return review?.open?.revision === revision ? `in review, round ${review.open.round}` : 'not reviewed'
 }
 

@@ -1,6 +1,6 @@
 import { ref } from 'vue'
 import type { ReviewState } from '#shared/contract/reviewState.ts'
-import { approvalWords, checkedWords } from '#shared/review/words.ts'
+import { approvalAt, approvalWords, checkedWords } from '#shared/review/words.ts'
 import { useChecksStore } from '../stores/checks.ts'
 import { useDiagramStore } from '../stores/diagram.ts'
 import { useAttempt } from './useAttempt.ts'
@@ -14,9 +14,9 @@ export function isoDay(now: Date): string {
 
 /** What the title block says of the review at a revision. */
 export function reviewOf(review: ReviewState | null, revision: number): { checked: string; approval?: string } {
-  const approval = review?.approval ?? null
+  const approval = approvalAt(review, revision)
   const checked = checkedWords(review, revision)
-  return approval && revision >= approval.revision ? { checked, approval: approvalWords(approval) } : { checked }
+  return approval ? { checked, approval: approvalWords(approval) } : { checked }
 }
 
 /** "reel-vault-north-room-revision-14.png" */

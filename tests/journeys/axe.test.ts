@@ -31,6 +31,7 @@ const faces: readonly [face: string, shown: RegExp][] = [
   ['joints', /W1/],
   ['findings', /W1 in carries/],
   ['bays', /C1/],
+  ['review', /8 of 3 TB SAS/],
 ]
 
 /** The rules whose verdict depends on the colours: the only ones that the other theme can break. */

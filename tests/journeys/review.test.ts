@@ -1,3 +1,4 @@
+import { AxeBuilder } from '@axe-core/playwright'
 import type { Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { useBrowser } from '../helpers/browser.ts'
@@ -26,6 +27,13 @@ describe('a second pair of eyes', () => {
     return page
   }
 
+  const expectAccessible = async (page: Page): Promise<void> => {
+    await page.evaluate(() => Promise.allSettled(document.getAnimations().map((animation) => animation.finished)))
+    const { violations } = await new AxeBuilder({ page }).setLegacyMode(true).analyze()
+    const grave = violations.filter(({ impact }) => impact === 'serious' || impact === 'critical')
+    expect(grave.map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(', ')}`)).toEqual([])
+  }
+
   /** Changes the machine's name in the settings, and waits until it is saved. */
   async function renameMachine(page: Page, machine: string, revision: number): Promise<void> {
     await page.getByRole('button', { name: 'Settings' }).click()
@@ -47,12 +55,14 @@ describe('a second pair of eyes', () => {
     const guest = await browser.newPage(phone)
     await guest.goto(link)
     await guest.getByText('Irma Solberg shows you the wiring plan').waitFor()
+    await expectAccessible(guest)
     await guest.getByLabel('Your name').fill('Jo Amsel')
     await guest.getByRole('button', { name: 'Open the build' }).click()
     await guest.getByText('Will it start with four drives on lead 1?').first().waitFor()
     await guest.getByText('How is each drive powered?').click()
     await guest.getByText('T1 lead 1, outlet 1 › W1 › W8').waitFor()
     expect(await guest.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390)
+    await expectAccessible(guest)
     await guest.getByRole('button', { name: 'Give your verdict' }).click()
     await guest.getByLabel('In a few words').fill('W1 carries four motors on one plug: split it.')
     await guest.getByRole('button', { name: 'Ask for changes' }).click()
@@ -62,7 +72,7 @@ describe('a second pair of eyes', () => {
     await renameMachine(builder, 'RV-N-02', 2)
     await builder.getByText('The build is at revision 2 by now').waitFor()
     await builder.getByRole('button', { name: 'Ask for the next round' }).click()
-    await builder.getByLabel('Noor Castellan').check()
+    await builder.getByRole('checkbox', { name: 'Noor Castellan' }).check()
     await builder.getByRole('button', { name: 'Ask about revision 2' }).click()
     await builder.getByRole('heading', { name: 'Round 2: revision 2' }).waitFor()
 

@@ -1,7 +1,14 @@
 import { describe, expect, test } from 'vitest'
 import type { Round } from '#shared/contract/rounds.ts'
 import { approvalsOf, isHeldBack, standingOf, type RoundFacts } from '#shared/review/standing.ts'
-import { approvalWords, checkedWords, reviewWords, rulesWords, standingWords } from '#shared/review/words.ts'
+import {
+  approvalAt,
+  approvalWords,
+  checkedWords,
+  reviewWords,
+  rulesWords,
+  standingWords,
+} from '#shared/review/words.ts'
 
 const facts = (more: Partial<RoundFacts> = {}): RoundFacts => ({
   state: 'open',
@@ -104,6 +111,9 @@ describe('in words', () => {
       'in review, round 1',
     )
     expect(checkedWords({ approval, open: null }, 13)).toBe('approved at revision 12')
+    expect(approvalAt(lapsed, 14)).toMatchObject({ revision: 12, lapsedRevision: null })
+    expect(approvalAt(lapsed, 15)).toEqual(lapsed.approval)
+    expect(approvalAt(lapsed, 11)).toBeNull()
     expect(checkedWords(lapsed, 12)).toBe('approved at revision 12')
     expect(checkedWords(lapsed, 14)).toBe('approved at revision 12')
     expect(checkedWords(lapsed, 15)).toBe('approval of revision 12 lapsed')
