@@ -5,9 +5,12 @@ export interface RefKey {
 }
 
 export function splitRef(ref: string): RefKey {
-  const digits = ref.search(/[0-9]/)
-  return digits < 0 ? { letters: ref, number: 0 } : { letters: ref.slice(0, digits), number: Number(ref.slice(digits)) }
+  let digits = 0
+  while (digits < ref.length && !isDigit(ref.charCodeAt(digits))) digits++
+  return { letters: ref.slice(0, digits), number: digits === ref.length ? 0 : Number(ref.slice(digits)) }
 }
+
+const isDigit = (code: number): boolean => code >= 48 && code <= 57
 
 function compareKeys(a: RefKey, b: RefKey): number {
   if (a.letters !== b.letters) return a.letters < b.letters ? -1 : 1

@@ -35,6 +35,7 @@ export function listFigures(model: Model): FigureGroup[] {
     { title: 'Current drawn', figures: loadFigures(model.load) },
     { title: 'Voltage accepted at the plug', figures: toleranceFigures(model) },
     { title: 'Supply rails', figures: railFigures(model) },
+    { title: 'Rails made from others', figures: converterFigures(model) },
     { title: 'Shared limits', figures: groupFigures(model) },
     { title: 'Supply as a whole', figures: supplyFigures(model) },
     { title: 'Controller', figures: controllerFigures(model) },
@@ -93,6 +94,17 @@ function railFigures({ supply }: Model): ListedFigure[] {
     add('peak_A', `${name}, peak`, 'A', rail.peak_A)
     add('peak_s', `${name}, peak holds`, 's', rail.peak_s)
     add('setPoint_V', `${name}, set point`, 'V', rail.setPoint_V)
+    return figures
+  })
+}
+
+function converterFigures({ converters }: Model): ListedFigure[] {
+  return converters.flatMap((converter) => {
+    const { figures, add } = gather(`converters.${converter.id}`)
+    const name = `${lineNames[converter.rail]} made from ${lineNames[converter.from.rail]}`
+    add('limit_A', `${name}, limit`, 'A', converter.limit_A, true)
+    add('setPoint_V', `${name}, set point`, 'V', converter.setPoint_V)
+    add('efficiency', `${name}, efficiency (share)`, '', converter.efficiency)
     return figures
   })
 }

@@ -13,7 +13,7 @@ import { withUniqueKeys } from './keys.ts'
 import { ledgerRows } from './ledger.ts'
 import { momentResults, timelineSteps } from './moments.ts'
 import { sortFindings, summarise } from './order.ts'
-import type { CheckResult } from './result.ts'
+import type { CheckResult, LedgerRow, MomentResult } from './result.ts'
 import { runRules } from './runRules.ts'
 import { weakestHop } from './weakestHop.ts'
 
@@ -53,7 +53,8 @@ export function judge(analysis: Analysis, document: BuildDocument, options: Chec
   const { build, data, power, turned } = analysis
   const found = runRules(options.rules ?? rules, analysis, options.strict ?? false)
   const findings = withUniqueKeys(sortFindings(found))
-  const ledger = ledgerRows(build, power)
+  let ledger: LedgerRow[] | undefined
+  let moments: MomentResult[] | undefined
   return {
     build: {
       name: document.name,
@@ -63,10 +64,15 @@ export function judge(analysis: Analysis, document: BuildDocument, options: Chec
       drives: build.parts.filter((part) => part.model.kind === 'drive').length,
     },
     ...summarise(findings),
-    weakestHop: weakestHop(ledger, build.settings.derating),
+    weakestHop: weakestHop(power, build.settings.derating),
     findings,
-    ledger,
-    moments: turnBack(momentResults(power), turned),
+    // Thousands of rows that only some readers want: written out when first read, and then kept.
+    get ledger() {
+      return (ledger ??= ledgerRows(power))
+    },
+    get moments() {
+      return (moments ??= turnBack(momentResults(power), turned))
+    },
     timeline: timelineSteps(power),
     dataPaths: toDataPaths(data),
     scan: toScanTime(data.scan),
@@ -79,5 +85,7 @@ export function judge(analysis: Analysis, document: BuildDocument, options: Chec
 export function acceptIn(result: CheckResult, { accepted }: BuildDocument): CheckResult {
   if (accepted.length === 0) return result
   const findings = markAccepted(result.findings, accepted)
-  return { ...result, findings, ...summarise(findings) }
+  // Copied by descriptors: a plain copy would write out the ledger.
+  const copy = Object.defineProperties({}, Object.getOwnPropertyDescriptors(result)) as CheckResult
+  return Object.assign(copy, { findings, ...summarise(findings) })
 }

@@ -1,4 +1,3 @@
-import type { ResolvedBuild } from '../build/resolve.ts'
 import { lineName } from '../electrical/lines.ts'
 import type {
   ConductorLoad,
@@ -12,7 +11,7 @@ import type {
 } from '../electrical/result.ts'
 import type { Quantity } from '../quantity/quantity.ts'
 import { nothing } from '../electrical/branchValues.ts'
-import { allowedVoltage, isStart } from '../electrical/tolerance.ts'
+import { isStart } from '../electrical/tolerance.ts'
 import { conductorName, contactName, railName } from '../electrical/names.ts'
 import { momentIds, type LedgerRow, type MomentId, type Subject } from './result.ts'
 import { conductorSubject, connectorSubject, jointSubject, partSubject, railSubject } from './subjects.ts'
@@ -21,49 +20,83 @@ import { nameOf } from './words.ts'
 /** Everything of a row that stays the same from moment to moment. */
 type RowHead = Pick<LedgerRow, 'kind' | 'name' | 'rail' | 'unit' | 'about'> & { subject: Subject }
 
+/** Called for each thing that has a load: what it is, what it carries, its limit for good and at a start. */
+type Visit = <T>(
+  head: (item: T) => RowHead,
+  item: T,
+  load: PerMoment,
+  sustained: number | null,
+  atStart: number | null,
+) => void
+
+/** Every rail, group, supply, contact and wire, in the order of the ledger. */
+function visitLoads({ rails, groups, totals, contacts, conductors }: PowerResult, visit: Visit): void {
+  for (const load of rails) {
+    const sustained = known(load.rail.limit_A)
+    visit(railHead, load, load.current_A, sustained, known(load.rail.peak_A) ?? sustained)
+  }
+  for (const load of groups) {
+    const limit = known(load.unit === 'W' ? load.group.limit_W : load.group.limit_A)
+    visit(groupHead, load, load.load, limit, limit)
+  }
+  for (const load of totals) {
+    const { total_W, peakTotal_W } = load.part.model.supply!
+    const sustained = known(total_W)
+    visit(supplyHead, load, load.load_W, sustained, known(peakTotal_W) ?? sustained)
+  }
+  for (const contact of contacts)
+    if (contact.current_A !== nothing) visit(contactHead, contact, contact.current_A, contact.limit_A, contact.limit_A)
+  for (const conductor of conductors)
+    if (conductor.limit_A !== null && conductor.current_A !== nothing)
+      visit(conductorHead, conductor, conductor.current_A, conductor.limit_A, conductor.limit_A)
+}
+
 /**
  * The power ledger: for each moment that the build has, every rail, group, supply, contact, wire and device with load,
  * limit and margin. Currents are magnitudes. Planes of boards have no limit of their own and are left out, as are
  * contacts and wires behind which nothing draws.
  */
-export function ledgerRows(build: ResolvedBuild, power: PowerResult): LedgerRow[] {
-  const moments = momentIds.filter((moment) => power.applies.has(moment))
+export function ledgerRows(power: PowerResult): LedgerRow[] {
+  const moments = momentsOf(power)
   const rows: LedgerRow[] = []
-  const add = (head: RowHead, load: PerMoment, sustained: number | null, atStart = sustained) => {
-    for (const moment of moments) {
-      const limit = isStart(moment) ? atStart : sustained
-      rows.push(row(head, moment, Math.abs(load[momentIds.indexOf(moment)]!), limit))
-    }
+  const add: Visit = (head, item, load, sustained, atStart) => {
+    const made = head(item)
+    for (const { moment, at, shortTime } of moments)
+      rows.push(row(made, moment, Math.abs(load[at]!), shortTime ? atStart : sustained, shortTime))
   }
-
-  for (const load of power.rails) {
-    const { limit_A, peak_A } = load.rail
-    const sustained = known(limit_A)
-    add(railHead(load), load.current_A, sustained, known(peak_A) ?? sustained)
-  }
-  for (const load of power.groups)
-    add(groupHead(load), load.load, known(load.unit === 'W' ? load.group.limit_W : load.group.limit_A))
-  for (const load of power.totals) {
-    const { total_W, peakTotal_W } = load.part.model.supply!
-    const sustained = known(total_W)
-    add(supplyHead(load), load.load_W, sustained, known(peakTotal_W) ?? sustained)
-  }
-  for (const contact of power.contacts)
-    if (contact.current_A !== nothing) add(contactHead(contact), contact.current_A, contact.limit_A)
-  for (const conductor of power.conductors)
-    if (conductor.limit_A !== null && conductor.current_A !== nothing)
-      add(conductorHead(conductor), conductor.current_A, conductor.limit_A)
+  visitLoads(power, add)
   for (const device of power.devices)
     if (device.fedBy.length > 0) {
-      const lowest_V = (moment: MomentId) => allowedVoltage(device, moment, build.settings).lowest_V
-      add(deviceHead(device), device.voltage_V, lowest_V('at-rest'), lowest_V('cold-start'))
+      const { otherwise, atStart } = device.allowed
+      add(deviceHead, device, device.voltage_V, otherwise.lowest_V, atStart.lowest_V)
     }
   return rows
 }
 
+/** The row of the ledger that is nearest to or furthest past its limit; null while all stay below this share of it. */
+export function weakestRow(power: PowerResult, share: number): LedgerRow | null {
+  const moments = momentsOf(power)
+  let most = share
+  let weakest: (() => LedgerRow) | null = null
+  visitLoads(power, (head, item, load, sustained, atStart) => {
+    for (const { moment, at, shortTime } of moments) {
+      const limit = shortTime ? atStart : sustained
+      if (limit === null || limit === 0) continue
+      const carried = Math.abs(load[at]!)
+      if (carried / limit <= most) continue
+      most = carried / limit
+      weakest = () => row(head(item), moment, carried, limit, shortTime)
+    }
+  })
+  return (weakest as (() => LedgerRow) | null)?.() ?? null
+}
+
+const momentsOf = ({ applies }: PowerResult) =>
+  momentIds.flatMap((moment, at) => (applies.has(moment) ? [{ moment, at, shortTime: isStart(moment) }] : []))
+
 const known = (quantity: Quantity | undefined): number | null => quantity?.value ?? quantity?.low ?? null
 
-function row(head: RowHead, moment: MomentId, load: number, limit: number | null): LedgerRow {
+function row(head: RowHead, moment: MomentId, load: number, limit: number | null, shortTime: boolean): LedgerRow {
   return {
     subject: head.subject,
     kind: head.kind,
@@ -75,7 +108,7 @@ function row(head: RowHead, moment: MomentId, load: number, limit: number | null
     unit: head.unit,
     margin: limit === null ? null : head.unit === 'V' ? load - limit : limit - load,
     share: limit === null || limit === 0 ? null : load / limit,
-    shortTime: isStart(moment),
+    shortTime,
     about: head.about,
   }
 }

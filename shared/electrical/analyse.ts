@@ -25,17 +25,17 @@ import { addUpSupplies } from './supplyLoads.ts'
  */
 export function analysePower(build: ResolvedBuild, data: DataResult): PowerResult {
   const network = buildNetwork(build)
-  const draws = attachLoads(network, new CurrentReader(build))
   const startPlan = planStart(build, data)
+  const draws = attachLoads(network, new CurrentReader(build), startPlan)
   const all = [...draws, ...convertedDraws(network, draws)]
   const islands = cutIslands(network, all, startPlan)
-  const solved = solveLines(network, all, islands, startPlan)
+  const solved = solveLines(network, all, islands)
   const supplies = build.parts.filter(({ model }) => model.supply)
   return {
     applies: momentsOf(build, startPlan),
     ...branchLoads(solved, islands),
     ...addUpSupplies(supplies, solved, islands, startPlan),
-    devices: deviceLoads(draws, solved, islands, startPlan),
+    devices: deviceLoads(draws, solved, islands, build.settings),
     problems: networkProblems(solved, draws),
     startPlan,
     network,

@@ -1,8 +1,10 @@
 import type { ResolvedConnector, ResolvedPart } from '../build/resolve.ts'
 import { rails, type Rail } from '../quantity/rails.ts'
+import { coursesOf, type Course } from './courses.ts'
 import type { CurrentReader, RailCurrents } from './deviceCurrents.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import type { LineNetwork, PowerNetwork } from './network.ts'
+import type { StartPlan } from './startPlan.ts'
 
 /** Where a device takes current from one rail: all of it, or a share at each of several inlets. */
 export interface Draw {
@@ -16,6 +18,8 @@ export interface Draw {
   flows: boolean
   /** The rail arrives, the return does not. */
   lacksReturn: boolean
+  /** What it does in each moment, in the order of `momentIds`. */
+  courses: readonly Course[]
   /** Ampere on the return at this connector for each ampere from the rail; 1 for devices. */
   onReturn: number
 }
@@ -26,20 +30,27 @@ export interface Draw {
  * The model's `loadAt` names the connector. Without it a device draws at the inlets that a source reaches from
  * outside, in proportion to what their contacts may carry; wires or planes inside the model join them.
  */
-export function attachLoads(network: PowerNetwork, reader: CurrentReader): Draw[] {
+export function attachLoads(network: PowerNetwork, reader: CurrentReader, plan: StartPlan): Draw[] {
   const draws: Draw[] = []
   for (const part of network.build.parts) {
     if (!part.model.load || part.model.supply || part.connectors.length === 0) continue
     const read = reader.read(part)
     for (const rail of rails) {
       const currents = read.find((entry) => entry.rail === rail)
-      if (currents) attach(network, part, rail, currents, draws)
+      if (currents) attach(network, part, currents, coursesOf(part, currents, plan), draws)
     }
   }
   return draws
 }
 
-function attach(network: PowerNetwork, part: ResolvedPart, rail: Rail, currents: RailCurrents, draws: Draw[]): void {
+function attach(
+  network: PowerNetwork,
+  part: ResolvedPart,
+  currents: RailCurrents,
+  courses: readonly Course[],
+  draws: Draw[],
+): void {
+  const { rail } = currents
   const supplied = network.byLine[lineIndex[rail]]!
   const returned = network.byLine[returnIndex]!
   const places = placesOf(supplied, part, rail)
@@ -56,6 +67,7 @@ function attach(network: PowerNetwork, part: ResolvedPart, rail: Rail, currents:
       share: total > 0 ? weights[i]! / total : 1 / places.length,
       flows: arrives && returns,
       lacksReturn: arrives && !returns,
+      courses,
       onReturn: 1,
     })
   })

@@ -1,7 +1,7 @@
 import { momentIds } from '../check/result.ts'
 import type { Island, Islands } from './islands.ts'
 import type { LineNetwork } from './network.ts'
-import type { PerMoment } from './result.ts'
+import type { LoadRange, PerMoment } from './result.ts'
 import type { SolvedLine } from './solveLines.ts'
 
 export const nothing: PerMoment = momentIds.map(() => 0)
@@ -20,11 +20,20 @@ export function branchCurrents(line: SolvedLine, branch: number, island: Island 
   return peaks(line.stated.current_A, line.columns.branch[branch]!, island, line.network.line === 'return' ? -1 : 1)
 }
 
-/** Magnitudes at the low and high end of all figures. */
-export function branchRange(line: SolvedLine, branch: number, island: Island | undefined) {
+/** Magnitudes at the low and high end of all figures, each worked out when asked for. */
+export function branchRange(line: SolvedLine, branch: number, island: Island | undefined): LoadRange {
   if (!island) return { low: nothing, high: nothing }
   const at = line.columns.branch[branch]!
-  return { low: peaks(line.low_A(), at, island, 0), high: peaks(line.high.current_A, at, island, 0) }
+  let low: PerMoment | undefined
+  let high: PerMoment | undefined
+  return {
+    get low() {
+      return (low ??= peaks(line.low_A(), at, island, 0))
+    },
+    get high() {
+      return (high ??= peaks(line.high.current_A, at, island, 0))
+    },
+  }
 }
 
 /** Largest magnitude of a branch at the high end of all figures, over all moments. */

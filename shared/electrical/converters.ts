@@ -28,7 +28,7 @@ export function convertedDraws({ byLine }: PowerNetwork, draws: readonly Draw[])
 }
 
 function atInput(
-  { part, currents }: Draw,
+  { part, currents, courses }: Draw,
   takes: ConverterInput,
   share: number,
   scaled: Map<ConverterInput, Map<RailCurrents, RailCurrents>>,
@@ -38,7 +38,8 @@ function atInput(
   let taken = known.get(currents)
   if (!taken) known.set(currents, (taken = scale(currents, takes.rail, takes.ampere)))
   const { connector, rail, ampere } = takes
-  return { part, connector, rail, currents: taken, share, flows: true, lacksReturn: false, onReturn: 1 - 1 / ampere }
+  const onReturn = 1 - 1 / ampere
+  return { part, connector, rail, currents: taken, share, flows: true, lacksReturn: false, courses, onReturn }
 }
 
 function scale({ inState, start_s }: RailCurrents, rail: Rail, factor: number): RailCurrents {

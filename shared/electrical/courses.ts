@@ -1,5 +1,5 @@
 import type { ResolvedPart } from '../build/resolve.ts'
-import type { MomentId } from '../check/result.ts'
+import { momentIds, type MomentId } from '../check/result.ts'
 import { hasStart, isMotorDrive, isSolidState, type RailCurrents, type State } from './deviceCurrents.ts'
 import type { StartPlan } from './startPlan.ts'
 
@@ -28,7 +28,7 @@ const writing = constant('writing')
  *
  * Times of the staged start are seconds; those of a wake are turns.
  */
-export function courseOf(moment: MomentId, part: ResolvedPart, currents: RailCurrents, plan: StartPlan): Course {
+function courseOf(moment: MomentId, part: ResolvedPart, currents: RailCurrents, plan: StartPlan): Course {
   switch (moment) {
     case 'cold-start':
       return hasStart(part) ? starting : scanning
@@ -44,6 +44,10 @@ export function courseOf(moment: MomentId, part: ResolvedPart, currents: RailCur
       return resting
   }
 }
+
+/** The courses of all moments, in the order of `momentIds`. */
+export const coursesOf = (part: ResolvedPart, currents: RailCurrents, plan: StartPlan): Course[] =>
+  momentIds.map((moment) => courseOf(moment, part, currents, plan))
 
 function stagedCourse(part: ResolvedPart, { start_s }: RailCurrents, plan: StartPlan): Course {
   if (!hasStart(part)) return scanning

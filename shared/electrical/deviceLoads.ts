@@ -1,8 +1,9 @@
+import type { Settings } from '../build/document.ts'
 import { momentIds } from '../check/result.ts'
 import { nominal_V } from '../quantity/rails.ts'
 import type { Draw } from './attach.ts'
 import { nothing } from './branchValues.ts'
-import { courseOf, type Course } from './courses.ts'
+import type { Course } from './courses.ts'
 import { states, type RailCurrents, type State } from './deviceCurrents.ts'
 import { onlyWay } from './downstream.ts'
 import type { Island, Islands } from './islands.ts'
@@ -10,18 +11,18 @@ import { lineIndex, returnIndex } from './lines.ts'
 import { pathToSource } from './pathToSource.ts'
 import type { DeviceLoad } from './result.ts'
 import type { SolvedLine } from './solveLines.ts'
-import type { StartPlan } from './startPlan.ts'
+import { bandOf } from './tolerance.ts'
 
 /** What every device takes and sees, at the worst step of each moment. */
 export function deviceLoads(
   draws: readonly Draw[],
   solved: readonly SolvedLine[],
   islands: Islands,
-  plan: StartPlan,
+  settings: Settings,
 ): DeviceLoad[] {
   return draws.map((draw) => {
-    const { part, connector, rail, currents, share, flows } = draw
-    const busiest = momentIds.map((moment) => busiestState(courseOf(moment, part, currents, plan), currents))
+    const { part, connector, rail, currents, courses, share, flows } = draw
+    const busiest = courses.map((course) => busiestState(course, currents))
     const supplied = solved[lineIndex[rail]]!
     const island = islands.all[islands.of[connector.index]!]
     return {
@@ -30,6 +31,7 @@ export function deviceLoads(
       rail,
       current_A: busiest.map((state) => (flows ? currents.inState[state].value * share : 0)),
       share,
+      allowed: bandOf(part, connector, rail, settings),
       fedBy: flows ? sourcesOf(supplied, connector.index) : [],
       ...(flows && island ? voltages(draw, supplied, solved[returnIndex]!, island) : unfed),
       figures: Object.fromEntries(momentIds.map((moment, m) => [moment, currents.inState[busiest[m]!].figure])),
@@ -62,18 +64,6 @@ function voltages(
   const node = connector.index
   const at = supplied.columns.node[node]!
   const atReturn = returned.columns.node[node]!
-  // The return is solved as if it, too, were drawn from: its rise is the negative of what comes out.
-  const lowest = (onRail_V: Float64Array, onReturn_V: Float64Array, m: number) => {
-    let least = Infinity
-    let column = first[m]!
-    for (let each = column; each < first[m + 1]!; each++) {
-      const volts = onRail_V[at + each]! + onReturn_V[atReturn + each]!
-      if (volts >= least) continue
-      least = volts
-      column = each
-    }
-    return { volts: nominal_V[rail] + least, column }
-  }
   const found = {
     voltage_V: zeros(),
     aged_V: zeros(),
@@ -81,17 +71,46 @@ function voltages(
     drop_V: { wire: zeros(), contact: zeros(), return: zeros() },
   }
   const way = onlyWay(supplied.network, node)
+  const nominal = nominal_V[rail]
   for (let m = 0; m < momentIds.length; m++) {
-    const { volts, column } = lowest(supplied.stated.voltage_V, returned.stated.voltage_V, m)
-    found.voltage_V[m] = volts
-    found.aged_V[m] = lowest(supplied.aged_V, returned.aged_V, m).volts
-    found.atHigh_V[m] = lowest(supplied.high.voltage_V, returned.high.voltage_V, m).volts
+    const from = first[m]!
+    const to = first[m + 1]!
+    const column = lowestColumn(supplied.stated.voltage_V, returned.stated.voltage_V, at, atReturn, from, to)
+    found.voltage_V[m] = nominal + sum(supplied.stated.voltage_V, returned.stated.voltage_V, at, atReturn, column)
+    const aged = lowestColumn(supplied.aged_V, returned.aged_V, at, atReturn, from, to)
+    found.aged_V[m] = nominal + sum(supplied.aged_V, returned.aged_V, at, atReturn, aged)
+    const high = lowestColumn(supplied.high.voltage_V, returned.high.voltage_V, at, atReturn, from, to)
+    found.atHigh_V[m] = nominal + sum(supplied.high.voltage_V, returned.high.voltage_V, at, atReturn, high)
     const { wire, contact } = dropOnTheWay(supplied, way, node, column)
     found.drop_V.wire[m] = wire
     found.drop_V.contact[m] = contact
     found.drop_V.return[m] = 0 - returned.stated.voltage_V[atReturn + column]!
   }
   return found
+}
+
+/** The return is solved as if it, too, were drawn from: its rise is the negative of what comes out. */
+const sum = (onRail_V: Float64Array, onReturn_V: Float64Array, at: number, atReturn: number, column: number): number =>
+  onRail_V[at + column]! + onReturn_V[atReturn + column]!
+
+/** The first column of a moment at which the device sees least. */
+function lowestColumn(
+  onRail_V: Float64Array,
+  onReturn_V: Float64Array,
+  at: number,
+  atReturn: number,
+  from: number,
+  to: number,
+): number {
+  let lowest = from
+  let least = Infinity
+  for (let column = from; column < to; column++) {
+    const volts = onRail_V[at + column]! + onReturn_V[atReturn + column]!
+    if (volts >= least) continue
+    least = volts
+    lowest = column
+  }
+  return lowest
 }
 
 const zeros = (): number[] => [0, 0, 0, 0, 0, 0]

@@ -2,14 +2,12 @@ import type { ResolvedPart } from '../build/resolve.ts'
 import { momentIds, type Figure, type MomentId } from '../check/result.ts'
 import { refsOf } from '../check/words.ts'
 import type { Draw } from './attach.ts'
-import { courseOf } from './courses.ts'
-import type { PowerResult } from './result.ts'
 
 /** Figures of loads, the heaviest together first: "start current on 12 V of C1 to C4". At most `most`. */
-export function loadFigures(power: PowerResult, draws: readonly Draw[], moment: MomentId, most = 4): Figure[] {
+export function loadFigures(draws: readonly Draw[], moment: MomentId, most = 4): Figure[] {
   const byFigure = new Map<Figure, { parts: ResolvedPart[]; sum_A: number }>()
   for (const draw of draws) {
-    const { figure, value } = busiest(power, draw, moment)
+    const { figure, value } = busiest(draw, moment)
     const known = byFigure.get(figure)
     if (known) {
       known.parts.push(draw.part)
@@ -24,21 +22,20 @@ export function loadFigures(power: PowerResult, draws: readonly Draw[], moment: 
 }
 
 /** The figure by which a device draws most at a moment. */
-export function busiest({ startPlan }: PowerResult, { part, currents }: Draw, moment: MomentId) {
-  return courseOf(moment, part, currents, startPlan)
-    .map(({ state }) => currents.inState[state])
-    .reduce((most, taken) => (taken.value > most.value ? taken : most))
+export function busiest({ courses, currents }: Draw, moment: MomentId) {
+  return courses[momentIndex(moment)]!.map(({ state }) => currents.inState[state]).reduce((most, taken) =>
+    taken.value > most.value ? taken : most,
+  )
 }
 
 /** The load figure whose range, over all devices that share it, moves a sum most; null where none has a range. */
 export function loadFigureWithMostRange(
-  power: PowerResult,
   draws: readonly Draw[],
   moment: MomentId,
 ): { figure: Figure; range: number } | null {
   const ranges = new Map<Figure, { range: number; part: ResolvedPart }>()
   for (const draw of draws) {
-    const { figure, low, high } = busiest(power, draw, moment)
+    const { figure, low, high } = busiest(draw, moment)
     const range = (high - low) * draw.share
     const known = ranges.get(figure)
     if (known) known.range += range

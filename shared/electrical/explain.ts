@@ -99,7 +99,7 @@ function ofContact(power: PowerResult, contact: ContactLoad, moment: MomentId): 
     moment,
     hops: hopsTo(power, line, branch, moment),
     steps: [...sumStep(power, line, branch, moment, current), ...limit, ...shareStep(current, limit_A)],
-    figures: [...(rating ? [rating] : []), ...loadFigures(power, power.behind(line, branch), moment, 12)],
+    figures: [...(rating ? [rating] : []), ...loadFigures(power.behind(line, branch), moment, 12)],
   }
 }
 
@@ -138,7 +138,7 @@ function ofWire(power: PowerResult, wire: ConductorLoad, moment: MomentId): Expl
     figures: [
       ...(ampacity ? [ampacity] : []),
       ...(conductor.length_mm ? [figureOf(conductor.length_mm, 'length', 'mm')] : []),
-      ...loadFigures(power, power.behind(conductor.line, branch), moment, 12),
+      ...loadFigures(power.behind(conductor.line, branch), moment, 12),
     ],
   }
 }
@@ -161,12 +161,12 @@ function ofRail(power: PowerResult, partId: string, railId: string, moment: Mome
     moment,
     hops: [],
     steps: [
-      { what: 'sum of all devices on it', formula: sumOf(power, draws, moment), value: current, unit: 'A' },
+      { what: 'sum of all devices on it', formula: sumOf(draws, moment), value: current, unit: 'A' },
       ...shareStep(current, limit),
     ],
     figures: [
       figureOf(load.rail.limit_A, `limit of ${railName(load.part, load.rail)}`, 'A'),
-      ...loadFigures(power, draws, moment, 12),
+      ...loadFigures(draws, moment, 12),
     ],
   }
 }
@@ -196,7 +196,7 @@ function ofDevice(build: ResolvedBuild, power: PowerResult, device: DeviceLoad, 
           {
             what: 'lowest that it accepts',
             formula: toleranceFigure(device, moment, build.settings).what,
-            value: allowedVoltage(device, moment, build.settings).lowest_V,
+            value: allowedVoltage(device, moment).lowest_V,
             unit: 'V',
           },
         ]
@@ -270,14 +270,14 @@ const nameOf = (load: ContactLoad | ConductorLoad): Pick<ExplainedHop, 'kind' | 
 function sumStep(power: PowerResult, line: Line, branch: number, moment: MomentId, current: number): ExplainedStep[] {
   const draws = power.behind(line, branch)
   if (draws.length === 0) return []
-  return [{ what: 'sum of all devices behind it', formula: sumOf(power, draws, moment), value: current, unit: 'A' }]
+  return [{ what: 'sum of all devices behind it', formula: sumOf(draws, moment), value: current, unit: 'A' }]
 }
 
 /** "4 x 2.0 A + 0.3 A": devices that take the same are drawn together. */
-function sumOf(power: PowerResult, draws: PowerResult['draws'], moment: MomentId): string {
+function sumOf(draws: PowerResult['draws'], moment: MomentId): string {
   const counts = new Map<string, number>()
   for (const draw of draws) {
-    const text = `${trim(busiest(power, draw, moment).value * draw.share)} A`
+    const text = `${trim(busiest(draw, moment).value * draw.share)} A`
     counts.set(text, (counts.get(text) ?? 0) + 1)
   }
   const terms = [...counts]

@@ -1,5 +1,4 @@
 import { momentIds, type MomentId } from '../check/result.ts'
-import { courseOf } from './courses.ts'
 import type { Draw } from './attach.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import type { PowerNetwork } from './network.ts'
@@ -63,17 +62,17 @@ const still = Float64Array.of(0)
 function layOut(index: number, draws: Draw[], plan: StartPlan): Island {
   const first = new Int32Array(momentIds.length + 1)
   const times = momentIds.map((moment, m) => {
-    const own = changes(moment, draws, plan)
+    const own = changes(moment, m, draws, plan)
     first[m + 1] = first[m]! + own.length
     return own
   })
   return { index, draws, times, first, cases: first[momentIds.length]! }
 }
 
-function changes(moment: MomentId, draws: readonly Draw[], plan: StartPlan): Float64Array {
+function changes(moment: MomentId, m: number, draws: readonly Draw[], plan: StartPlan): Float64Array {
   if (!plan.staged || (moment !== 'staged-start' && moment !== 'wake')) return still
   const seen = new Set([0])
-  for (const { part, currents } of draws) for (const { from } of courseOf(moment, part, currents, plan)) seen.add(from)
+  for (const { courses } of draws) for (const { from } of courses[m]!) seen.add(from)
   return Float64Array.from(seen).sort()
 }
 
@@ -83,20 +82,19 @@ export type Scenario = 'value' | 'low' | 'high'
 /** Adds what each draw takes to the columns of its island at its own connector: on its rail, and on the return. */
 export function fillDraws(
   islands: Islands,
-  plan: StartPlan,
   columns: readonly Columns[],
   drawn: readonly Float64Array[],
   scenario: Scenario,
 ): void {
   const onReturn = drawn[returnIndex]!
   for (const { draws, first, times } of islands.all)
-    for (const { part, connector, rail, currents, share, onReturn: returned } of draws) {
+    for (const { connector, rail, currents, courses, share, onReturn: returned } of draws) {
       const line = lineIndex[rail]
       const onRail = drawn[line]!
       const railAt = columns[line]!.node[connector.index]!
       const returnAt = columns[returnIndex]!.node[connector.index]!
-      for (const [m, moment] of momentIds.entries()) {
-        const course = courseOf(moment, part, currents, plan)
+      for (let m = 0; m < momentIds.length; m++) {
+        const course = courses[m]!
         const steps = times[m]!
         let segment = 0
         for (let step = 0; step < steps.length; step++) {

@@ -27,7 +27,7 @@ export function findRelief(
   moment: MomentId,
   excess_A: number,
 ): Relief {
-  const loads = loadsByDrive(power, draws, rail, moment)
+  const loads = loadsByDrive(draws, rail, moment)
   let move = 0
   for (let left = excess_A; left > 1e-9 && move < loads.length; move++) left -= loads[move]!.load_A
   const first = loads[0]
@@ -42,11 +42,11 @@ export function findRelief(
 }
 
 /** What each drive puts on the hop, heaviest first, at the place where it draws. */
-function loadsByDrive(power: PowerResult, draws: readonly Draw[], rail: Rail, moment: MomentId) {
+function loadsByDrive(draws: readonly Draw[], rail: Rail, moment: MomentId) {
   const byDrive = new Map<ResolvedPart, { draw: Draw; load_A: number }>()
   for (const draw of draws) {
     if (draw.rail !== rail || draw.part.model.kind !== 'drive') continue
-    const load_A = busiest(power, draw, moment).value * draw.share
+    const load_A = busiest(draw, moment).value * draw.share
     const known = byDrive.get(draw.part)
     if (known) known.load_A += load_A
     else byDrive.set(draw.part, { draw, load_A })

@@ -5,6 +5,7 @@ import type { Line, Rail } from '../quantity/rails.ts'
 import type { Draw } from './attach.ts'
 import type { PowerNetwork } from './network.ts'
 import type { StartPlan } from './startPlan.ts'
+import type { AllowedBand } from './tolerance.ts'
 
 /** One value a moment, in the order of `momentIds`. Moments that do not apply are computed too, and not judged. */
 export type PerMoment = readonly number[]
@@ -91,6 +92,8 @@ export interface DeviceLoad {
   connector: ResolvedConnector
   rail: Rail
   current_A: PerMoment
+  /** What it accepts. */
+  allowed: AllowedBand
   /** Supply rails that reach it; empty: the rail does not arrive. */
   fedBy: readonly { part: ResolvedPart; rail: SupplyRail }[]
   /** Share of the part's current on this rail that it takes at this connector, 0 to 1. */

@@ -6,7 +6,6 @@ import { fillDraws, type Islands, type Scenario } from './islands.ts'
 import { lineIndex, returnIndex } from './lines.ts'
 import type { LineNetwork, PowerNetwork } from './network.ts'
 import { columnsOf, solveNetwork, voltagesOf, type Columns, type Solution } from './solve/solve.ts'
-import type { StartPlan } from './startPlan.ts'
 
 /** A solved line: what each branch carries and each node stands at, column by column. */
 export interface SolvedLine {
@@ -25,16 +24,11 @@ export interface SolvedLine {
 }
 
 /** Solves all lines for all moments: as stated, with aged contacts, and with all loads at either end of their range. */
-export function solveLines(
-  { byLine }: PowerNetwork,
-  draws: readonly Draw[],
-  islands: Islands,
-  plan: StartPlan,
-): SolvedLine[] {
+export function solveLines({ byLine }: PowerNetwork, draws: readonly Draw[], islands: Islands): SolvedLine[] {
   const columns = byLine.map((network) => columnsOf(network.plan, layOutColumns(network, draws, islands)))
   const drawnIn = (scenario: Scenario) => {
     const drawn = columns.map(({ node }) => new Float64Array(node.at(-1)!))
-    fillDraws(islands, plan, columns, drawn, scenario)
+    fillDraws(islands, columns, drawn, scenario)
     return drawn
   }
   const stated = drawnIn('value')

@@ -1,4 +1,7 @@
 import type { Settings } from '../build/document.ts'
+import type { ResolvedConnector, ResolvedPart } from '../build/resolve.ts'
+import type { Tolerance } from '../catalog/model.ts'
+import type { Quantity } from '../quantity/quantity.ts'
 import type { Figure, MomentId } from '../check/result.ts'
 import { nominal_V, type Rail } from '../quantity/rails.ts'
 import { figureOf } from './figures.ts'
@@ -46,20 +49,35 @@ const standards: Readonly<Record<Settings['tolerance'], { source: string; title:
 /** Tolerance at a card's slot, per cent either way: PCI Express card specification, from memory. */
 const slot_pct: Readonly<Record<Rail, number>> = { '12V': 8, '5V': 5, '3.3V': 9 }
 
+/** What a device accepts while motors start, and otherwise. */
+export interface AllowedBand {
+  atStart: AllowedVoltage
+  otherwise: AllowedVoltage
+}
+
 /** What a device must see: by its own maker's figure, else by its slot's, else by the build's supply standard. */
-export function allowedVoltage(device: DeviceLoad, moment: MomentId, settings: Settings): AllowedVoltage {
-  const { part, connector, rail } = device
-  const start = isStart(moment)
+export function bandOf(part: ResolvedPart, connector: ResolvedConnector, rail: Rail, settings: Settings): AllowedBand {
   const own = part.model.drive?.tolerance[rail]
   if (own) {
-    const { value, low } = (start && own.belowAtStart_pct) || own.below_pct
-    const below = value ?? low ?? slotless_pct
-    return within(rail, below, own.above_pct?.value ?? own.above_pct?.low ?? below)
+    const otherwise = ownBand(rail, own, own.below_pct)
+    return { otherwise, atStart: own.belowAtStart_pct ? ownBand(rail, own, own.belowAtStart_pct) : otherwise }
   }
-  if (connector.type.side === 'edge') return within(rail, slot_pct[rail], slot_pct[rail])
+  if (connector.type.side === 'edge') {
+    const slot = within(rail, slot_pct[rail], slot_pct[rail])
+    return { otherwise: slot, atStart: slot }
+  }
   const band = standards[settings.tolerance][rail]
-  return start && band.atStart ? band.atStart : band
+  return { otherwise: band, atStart: band.atStart ?? band }
 }
+
+function ownBand(rail: Rail, { above_pct }: Tolerance, { value, low }: Quantity): AllowedVoltage {
+  const below = value ?? low ?? slotless_pct
+  return within(rail, below, above_pct?.value ?? above_pct?.low ?? below)
+}
+
+/** The band of one moment. */
+export const allowedVoltage = ({ allowed }: Pick<DeviceLoad, 'allowed'>, moment: MomentId): AllowedVoltage =>
+  isStart(moment) ? allowed.atStart : allowed.otherwise
 
 /** Taken where a device gives a tolerance without a figure, per cent. */
 const slotless_pct = 5
@@ -84,6 +102,6 @@ export function toleranceFigure(device: DeviceLoad, moment: MomentId, settings: 
     return { what, value: slot_pct[rail], unit: '%', origin: 'standard', fromMemory: true }
   }
   const { source, title } = standards[settings.tolerance]
-  const { lowest_V } = allowedVoltage(device, moment, settings)
+  const { lowest_V } = allowedVoltage(device, moment)
   return { what: `lowest ${lineName[rail]}, ${title}`, value: lowest_V, unit: 'V', origin: 'standard', source }
 }

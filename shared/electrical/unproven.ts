@@ -35,7 +35,7 @@ interface Context {
 /** All hops whose verdict is not settled by the figures at hand. */
 export function unprovenHops({ power, build }: Context): UnprovenHop[] {
   const { shortTimeAllowance } = build.settings
-  const found = [...ofSupplies(power), ...ofVoltages(power, build), ...ofLengths(power, build)]
+  const found = [...ofSupplies(power), ...ofVoltages(power), ...ofLengths(power)]
   for (const contact of power.contacts) found.push(...ofContact(power, contact, shortTimeAllowance))
   for (const wire of power.conductors) found.push(...ofWire(power, wire, shortTimeAllowance))
   return found
@@ -54,7 +54,7 @@ function ofContact(power: PowerResult, contact: ContactLoad, allowance: number):
   const figure: Figure | null =
     turn.turns === 'limit-unknown'
       ? { what: `rating of one contact, ${contact.weaker.type.name}`, value: null, unit: 'A', origin: 'guess' }
-      : deciding(power, power.behind(contact.line, contact.branch), turn.moment, limit_A! - limitLow_A!, rating)
+      : deciding(power.behind(contact.line, contact.branch), turn.moment, limit_A! - limitLow_A!, rating)
   return figure ? [{ name: contactName(contact), subject: jointSubject(contact.joint), ...turn, figure }] : none
 }
 
@@ -64,7 +64,7 @@ function ofWire(power: PowerResult, wire: ConductorLoad, allowance: number): Unp
   const turn = turnOf(power, current_A, wire.range_A, limit_A, limitLow_A, allowance)
   if (!turn) return none
   const draws = power.behind(wire.conductor.line, wire.branch)
-  const figure = deciding(power, draws, turn.moment, limit_A - limitLow_A, ampacity)
+  const figure = deciding(draws, turn.moment, limit_A - limitLow_A, ampacity)
   return figure
     ? [{ name: conductorName(wire), subject: conductorSubject(wire.part, wire.index), ...turn, figure }]
     : none
@@ -88,7 +88,7 @@ function ofSupplies(power: PowerResult): UnprovenHop[] {
     if (!turn) return none
     const draws = power.draws.filter((_, i) => power.devices[i]!.fedBy.some(feeds))
     const stated = figureOf(quantity, `limit of ${name}`, unit)
-    const figure = deciding(power, draws, turn.moment, limit - limitLow, stated)
+    const figure = deciding(draws, turn.moment, limit - limitLow, stated)
     return figure ? [{ name, subject, ...turn, figure }] : none
   }
   return [
@@ -128,19 +128,19 @@ function ofSupplies(power: PowerResult): UnprovenHop[] {
   ]
 }
 
-function ofVoltages(power: PowerResult, build: ResolvedBuild): UnprovenHop[] {
+function ofVoltages(power: PowerResult): UnprovenHop[] {
   return power.devices.flatMap((device, i): UnprovenHop[] => {
     if (device.fedBy.length === 0) return none
     let lowest: { moment: MomentId; by_V: number } | null = null
     for (let m = 0; m < momentIds.length; m++) {
       const moment = momentIds[m]!
       if (!power.applies.has(moment)) continue
-      const { lowest_V } = allowedVoltage(device, moment, build.settings)
+      const { lowest_V } = allowedVoltage(device, moment)
       const by_V = lowest_V - device.atHigh_V[m]!
       if (device.voltage_V[m]! < lowest_V || by_V <= 1e-9) continue
       if (by_V > (lowest?.by_V ?? 0)) lowest = { moment, by_V }
     }
-    const byLoad = lowest && loadFigureWithMostRange(power, [power.draws[i]!], lowest.moment)
+    const byLoad = lowest && loadFigureWithMostRange([power.draws[i]!], lowest.moment)
     if (!lowest || !byLoad) return none
     return [
       {
@@ -156,20 +156,17 @@ function ofVoltages(power: PowerResult, build: ResolvedBuild): UnprovenHop[] {
 }
 
 /** Devices that see too little only because a length on their way is not known. */
-function ofLengths(power: PowerResult, build: ResolvedBuild): UnprovenHop[] {
+function ofLengths(power: PowerResult): UnprovenHop[] {
   return power.devices.flatMap((device): UnprovenHop[] => {
     if (device.fedBy.length === 0) return none
     const short = momentIds.filter(
-      (moment, m) =>
-        power.applies.has(moment) && device.voltage_V[m]! < allowedVoltage(device, moment, build.settings).lowest_V,
+      (moment, m) => power.applies.has(moment) && device.voltage_V[m]! < allowedVoltage(device, moment).lowest_V,
     )
     const wires = short.length > 0 ? unsureWires(power, device) : []
     const [moment] = short
     const longest = wires[0]
     if (!moment || !longest) return none
-    const turns = short.every(
-      (each) => voltageAtLeast(device, wires, each) >= allowedVoltage(device, each, build.settings).lowest_V,
-    )
+    const turns = short.every((each) => voltageAtLeast(device, wires, each) >= allowedVoltage(device, each).lowest_V)
     return turns
       ? [
           {
@@ -220,13 +217,12 @@ function turnOfUnknown({ applies }: PowerResult, stated: PerMoment): Turn | null
 
 /** The figure whose range moves the verdict most: the limit's, or one of the loads'. */
 function deciding(
-  power: PowerResult,
   draws: readonly Draw[],
   moment: MomentId,
   limitRange: number,
   limitFigure: Figure | null,
 ): Figure | null {
-  const byLoad = loadFigureWithMostRange(power, draws, moment)
+  const byLoad = loadFigureWithMostRange(draws, moment)
   if (byLoad && byLoad.range >= limitRange) return byLoad.figure
   return limitRange > 0 ? limitFigure : (byLoad?.figure ?? null)
 }

@@ -4,6 +4,14 @@ import { z } from 'zod'
 export const originKinds = ['standard', 'maker', 'measured', 'common practice', 'class default', 'guess'] as const
 export type OriginKind = (typeof originKinds)[number]
 
+/** Below this a figure is a slip of the pen: a share of it would no longer be a number. */
+const least = 1e-9
+const figure = z
+  .number()
+  .min(0)
+  .max(1e9)
+  .refine((value) => value === 0 || value >= least, { message: `too small for a figure: zero, or at least ${least}` })
+
 /**
  * One figure with its origin. The unit stands in the name of the field that holds it (`limit_A`, `length_mm`).
  *
@@ -12,9 +20,9 @@ export type OriginKind = (typeof originKinds)[number]
  */
 export const quantitySchema = z
   .strictObject({
-    value: z.number().min(0).max(1e9).nullable(),
-    low: z.number().min(0).max(1e9).optional(),
-    high: z.number().min(0).max(1e9).optional(),
+    value: figure.nullable(),
+    low: figure.optional(),
+    high: figure.optional(),
     origin: z.enum(originKinds),
     /** Id in `catalog/sources.json`. */
     source: z.string().max(60).optional(),

@@ -13,10 +13,16 @@ import { originKinds, quantitySchema, type Quantity } from '#shared/quantity/qua
 import { buildDocumentSchema } from '#shared/build/document.ts'
 import { refLetter } from '#shared/build/refs.ts'
 
+/** The schema refuses what lies between zero and this. */
+const leastFigure = 1e-9
+function asFigure(value: number): number {
+  return value === 0 ? 0 : Math.max(leastFigure, value)
+}
+
 /** Values that break careless arithmetic: nothing, next to nothing, far too much. */
 const oddValue = fc.oneof(
   fc.constantFrom(null, 0, 1e-9, 1e-3, 1, 12, 1e3, 1e9),
-  fc.double({ min: 0, max: 1e9, noNaN: true }),
+  fc.double({ min: 0, max: 1e9, noNaN: true }).map(asFigure),
 )
 
 const oddQuantity: fc.Arbitrary<Quantity> = fc
@@ -28,7 +34,7 @@ const oddQuantity: fc.Arbitrary<Quantity> = fc
   .map(({ value, spread, origin }) => ({
     value,
     origin,
-    ...(spread === null ? {} : { low: (value ?? 1) / (1 + spread), high: Math.min(1e9, (value ?? 1) * (1 + spread)) }),
+    ...(spread === null ? {} : { low: asFigure((value ?? 1) / (1 + spread)), high: Math.min(1e9, (value ?? 1) * (1 + spread)) }),
   }))
 
 /** Every path of a model at which a part may put its own figure. */

@@ -87,7 +87,7 @@ function toFinding(
     load: verdict.load,
     limit: verdict.limit,
     unit: 'A',
-    decidedBy: [...(contact.rating ? [contact.rating] : []), ...loadFigures(power, draws, verdict.moment)],
+    decidedBy: [...(contact.rating ? [contact.rating] : []), ...loadFigures(draws, verdict.moment)],
     about: contact.about,
     facts: {
       contact,

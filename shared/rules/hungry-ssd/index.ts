@@ -55,7 +55,7 @@ export const hungrySsd = defineRule<Facts>({
       const writing = Math.abs(hop.load[burst]!)
       const reading = Math.abs(hop.load[scan]!)
       const solid = hop.draws().filter(({ part, rail }) => isSolidState(part) && rail === '5V')
-      const theirs = solid.reduce((sum, draw) => sum + busiest(power, draw, 'write-burst').value * draw.share, 0)
+      const theirs = solid.reduce((sum, draw) => sum + busiest(draw, 'write-burst').value * draw.share, 0)
       if (theirs * (hop.unit === 'W' ? 5 : 1) < writing / 2) continue
       const known = worst.get(hop.supply)
       if (!known || exceeds(writing / hop.limit, Math.abs(known.hop.load[burst]!) / known.hop.limit))
@@ -68,7 +68,7 @@ export const hungrySsd = defineRule<Facts>({
       load: Math.abs(facts.hop.load[burst]!),
       limit: facts.hop.limit,
       unit: facts.hop.unit,
-      decidedBy: loadFigures(power, facts.hop.draws(), 'write-burst'),
+      decidedBy: loadFigures(facts.hop.draws(), 'write-burst'),
       about: facts.hop.about,
       facts,
     }))

@@ -48,7 +48,7 @@ export const railOverLimit = defineRule<Facts>({
           unit: 'A' as const,
           decidedBy: [
             figureOf(rail.limit_A, `limit of ${railName(part, rail)}`, 'A'),
-            ...loadFigures(power, draws, verdict.moment),
+            ...loadFigures(draws, verdict.moment),
           ],
           about,
           facts: {

@@ -9,7 +9,6 @@ import { atMoment } from '../../electrical/names.ts'
 import type { DeviceLoad, PowerResult } from '../../electrical/result.ts'
 import { unsureWires } from '../../electrical/unsureWay.ts'
 import { allowedVoltage, toleranceFigure } from '../../electrical/tolerance.ts'
-import type { Settings } from '../../build/document.ts'
 import { defineRule } from '../rule.ts'
 
 interface Facts {
@@ -44,7 +43,7 @@ export const voltageOutOfTolerance = defineRule<Facts>({
   },
   check({ power, build }) {
     return power.devices.flatMap((device) => {
-      const worst = worstVoltage(device, power, build.settings)
+      const worst = worstVoltage(device, power)
       if (!worst) return []
       const { severity, ...facts } = worst
       const figure = toleranceFigure(device, facts.moment, build.settings)
@@ -103,30 +102,41 @@ const currentFigure = ({ figures }: DeviceLoad, moment: MomentId): Figure[] => {
   return figure ? [figure] : []
 }
 
-function worstVoltage(
-  device: DeviceLoad,
-  { applies }: PowerResult,
-  settings: Settings,
-): (Omit<Facts, 'device' | 'figure'> & { severity: Severity }) | null {
+interface Worst extends Omit<Facts, 'device' | 'figure'> {
+  severity: Severity
+  by_V: number
+}
+
+function worstVoltage(device: DeviceLoad, { applies }: PowerResult): Worst | null {
   if (device.fedBy.length === 0) return null
-  let worst: (Omit<Facts, 'device' | 'figure'> & { severity: Severity; by_V: number }) | null = null
-  for (const [m, moment] of momentIds.entries()) {
+  let worst: Worst | null = null
+  for (let m = 0; m < momentIds.length; m++) {
+    const moment = momentIds[m]!
     if (!applies.has(moment)) continue
-    const { lowest_V, highest_V } = allowedVoltage(device, moment, settings)
+    const { lowest_V, highest_V } = allowedVoltage(device, moment)
     const fresh = device.voltage_V[m]!
     const aged = device.aged_V[m]!
-    const keep = (severity: Severity, seen_V: number, allowed_V: number, whenAged: boolean) => {
-      const by_V = Math.abs(seen_V - allowed_V)
-      if (
-        !worst ||
-        severityRank[severity] < severityRank[worst.severity] ||
-        (severity === worst.severity && by_V > worst.by_V + rounding_V)
-      )
-        worst = { severity, moment, seen_V, allowed_V, whenAged, by_V }
-    }
-    if (fresh > highest_V + rounding_V) keep('fault', fresh, highest_V, false)
-    else if (fresh < lowest_V - rounding_V) keep(moment === 'wake' ? 'caution' : 'fault', fresh, lowest_V, false)
-    else if (aged < lowest_V - rounding_V) keep('caution', aged, lowest_V, true)
+    if (fresh > highest_V + rounding_V) worst = graver(worst, 'fault', moment, fresh, highest_V, false)
+    else if (fresh < lowest_V - rounding_V)
+      worst = graver(worst, moment === 'wake' ? 'caution' : 'fault', moment, fresh, lowest_V, false)
+    else if (aged < lowest_V - rounding_V) worst = graver(worst, 'caution', moment, aged, lowest_V, true)
   }
   return worst
+}
+
+/** The graver of two, then the one that is further off. */
+function graver(
+  worst: Worst | null,
+  severity: Severity,
+  moment: MomentId,
+  seen_V: number,
+  allowed_V: number,
+  whenAged: boolean,
+): Worst {
+  const by_V = Math.abs(seen_V - allowed_V)
+  const stays =
+    worst !== null &&
+    severityRank[severity] >= severityRank[worst.severity] &&
+    !(severity === worst.severity && by_V > worst.by_V + rounding_V)
+  return stays ? worst : { severity, moment, seen_V, allowed_V, whenAged, by_V }
 }

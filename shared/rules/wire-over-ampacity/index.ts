@@ -83,7 +83,7 @@ function toFinding({ power }: RuleContext, found: readonly Found[]): RawFinding<
     load: verdict.load,
     limit: verdict.limit,
     unit: 'A',
-    decidedBy: [...(conductor.ampacity ? [conductor.ampacity] : []), ...loadFigures(power, draws, verdict.moment)],
+    decidedBy: [...(conductor.ampacity ? [conductor.ampacity] : []), ...loadFigures(draws, verdict.moment)],
     about: conductor.about,
     facts: { conductor, verdict, others: found.length - 1, draws },
   }
