@@ -4,9 +4,13 @@ import { publish, type Cause } from '../events/publish.ts'
 import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
 
-/** Hash of everything that an approval covers: the whole document but for where things are drawn on the sheet. */
+/** Hash of everything that an approval covers: all but where things are drawn on the sheet and what is bought already. */
 export const approvedHash = (document: BuildDocument): string =>
-  contentHash({ ...document, parts: document.parts.map(({ position: _position, ...part }) => part) })
+  contentHash({
+    ...document,
+    purchases: undefined,
+    parts: document.parts.map(({ position: _position, ...part }) => part),
+  })
 
 /**
  * Takes away approvals that a new revision no longer deserves: an approval covers one state of the plan, so any change but

@@ -1,4 +1,4 @@
-import type { BuildDocument, Part } from './document.ts'
+import type { BuildDocument, Part, Purchase } from './document.ts'
 import type { Change, PartPatch } from './changes.ts'
 
 /** Thrown when a change does not fit the document it is applied to. `index` is the change's place in the list. */
@@ -119,6 +119,10 @@ function applyOne(draft: Draft, change: Change, index: number): void {
       draft.document.settings = change.settings
       return
     }
+    case 'setPurchase': {
+      draft.document = withPurchase(draft.document, change.line, change.purchase)
+      return
+    }
     case 'rename': {
       draft.document.name = change.name
       if (change.machine === null) delete draft.document.machine
@@ -136,4 +140,16 @@ export function patchPart(part: Part, patch: PartPatch): Part {
     else if (value !== undefined) result[field] = value
   }
   return result as Part
+}
+
+/** The last note taken away leaves no empty list behind: the document is again what it was. */
+function withPurchase(
+  { purchases = [], ...document }: BuildDocument,
+  line: string,
+  purchase: Omit<Purchase, 'line'> | null,
+): BuildDocument {
+  const place = purchases.findIndex((one) => one.line === line)
+  const next = purchases.filter((one) => one.line !== line)
+  if (purchase) next.splice(place < 0 ? next.length : place, 0, { line, ...purchase })
+  return next.length === 0 ? document : { ...document, purchases: next }
 }

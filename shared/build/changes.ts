@@ -1,7 +1,7 @@
 import { z } from 'zod'
 import { catalogIdSchema, localIdSchema } from '../catalog/ids.ts'
 import { modelSchema } from '../catalog/model.ts'
-import { acceptedFindingSchema, jointSchema, partSchema, settingsSchema } from './document.ts'
+import { acceptedFindingSchema, jointSchema, partSchema, purchaseSchema, settingsSchema } from './document.ts'
 
 /** Fields of a part that can be edited one by one; `null` clears an optional one. Id stays. */
 export const partPatchSchema = z.strictObject({
@@ -38,6 +38,12 @@ export const changeSchema = z.discriminatedUnion('op', [
   z.strictObject({ op: z.literal('acceptFinding'), accepted: acceptedFindingSchema }),
   z.strictObject({ op: z.literal('withdrawAcceptance'), key: z.string().min(1).max(300) }),
   z.strictObject({ op: z.literal('updateSettings'), settings: settingsSchema }),
+  /** Notes about buying one line of the parts list, as a whole; `null` clears them. */
+  z.strictObject({
+    op: z.literal('setPurchase'),
+    line: purchaseSchema.shape.line,
+    purchase: purchaseSchema.omit({ line: true }).nullable(),
+  }),
   z.strictObject({
     op: z.literal('rename'),
     name: z.string().min(1).max(120),

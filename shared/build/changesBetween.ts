@@ -6,7 +6,7 @@ import { same } from './same.ts'
 /**
  * The changes that lead from one state of a build to another, so that going back to an old state is an edit like any
  * other: it can be undone, and merged with what others do. Applied to `from` they give the content of `to`; lists may
- * end in another order.
+ * end in another order. Notes about buying stay as they are: what is in the house does not leave it with an old plan.
  */
 export function changesBetween(from: BuildDocument, to: BuildDocument): Change[] {
   const joints = lists(from.joints, to.joints)

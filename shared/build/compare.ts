@@ -2,7 +2,7 @@ import type { Model } from '../catalog/model.ts'
 import type { Quantity } from '../quantity/quantity.ts'
 import { compareFigures, type FigureDifference } from './compareFigures.ts'
 import { compareJoints, type JointDifference } from './compareJoints.ts'
-import type { AcceptedFinding, BuildDocument, Part } from './document.ts'
+import type { AcceptedFinding, BuildDocument, Part, Purchase } from './document.ts'
 import { same } from './same.ts'
 
 /** Fields of a part that are told with their value before and after. */
@@ -29,6 +29,7 @@ export type Difference =
   /** With the figures that differ; empty where something else of the model does. */
   | { kind: 'model changed'; model: string; name: string; figures: FigureDifference[] }
   | { kind: 'finding accepted' | 'acceptance withdrawn'; key: string; reason: string }
+  | { kind: 'purchase changed'; line: string; from: Purchase | null; to: Purchase | null }
   | { kind: 'build renamed'; field: 'name' | 'machine'; from: string; to: string }
   | JointDifference
 
@@ -54,6 +55,7 @@ export function compareBuilds(
     ...compareJoints(before, after, travels),
     ...compareModels(before.models, after.models),
     ...compareAccepted(before.accepted, after.accepted),
+    ...comparePurchases(before.purchases ?? [], after.purchases ?? []),
   ]
 }
 
@@ -147,4 +149,12 @@ function compareAccepted(before: readonly AcceptedFinding[], after: readonly Acc
       .filter((entry) => !same(old?.get(entry.key), entry))
       .map(({ key, reason }): Difference => ({ kind: 'finding accepted', key, reason })),
   ]
+}
+
+function comparePurchases(before: readonly Purchase[], after: readonly Purchase[]): Difference[] {
+  const [old, now] = [before, after].map((list) => new Map(list.map((entry) => [entry.line, entry])))
+  return [...new Set([...before, ...after].map(({ line }) => line))].flatMap((line): Difference[] => {
+    const [from, to] = [old?.get(line) ?? null, now?.get(line) ?? null]
+    return same(from, to) ? [] : [{ kind: 'purchase changed', line, from, to }]
+  })
 }

@@ -77,6 +77,8 @@ function placeOf(difference: Difference): Told {
         parts: [difference.at.part],
         joint: { before: difference.was, after: difference.joint },
       }
+    case 'purchase changed':
+      return { group: 'details', mark: 'changed', parts: [] }
     case 'setting changed':
     case 'build renamed':
       return { group: 'settings', mark: 'changed', parts: [] }

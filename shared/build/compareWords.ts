@@ -1,6 +1,7 @@
 import type { Quantity } from '../quantity/quantity.ts'
 import type { Difference, Place, ToldField } from './compare.ts'
 import type { NamedEnd } from './compareJoints.ts'
+import type { Purchase } from './document.ts'
 
 const fieldNames: Readonly<Record<ToldField, string>> = {
   ref: 'designation',
@@ -92,6 +93,12 @@ export function differenceWords(difference: Difference, names: CompareNames = {}
       return `Finding accepted (${findingName(difference.key)}): ${difference.reason}`
     case 'acceptance withdrawn':
       return `Acceptance withdrawn (${findingName(difference.key)}).`
+    case 'purchase changed':
+      return changedWords(
+        `Parts list, ${lineWords(difference.line, modelName)}`,
+        purchaseWords(difference.from),
+        purchaseWords(difference.to),
+      )
     case 'build renamed':
       return changedWords(
         difference.field === 'name' ? 'Name of the build' : 'Name on the machine',
@@ -119,7 +126,28 @@ function figureWords(quantity: Quantity | null): string {
   return `${quantity.value ?? 'unknown'} (${quantity.origin})`
 }
 
+function lineWords(line: string, modelName: (id: string) => string): string {
+  const [model = line, length] = line.split('@')
+  return length === undefined ? modelName(model) : `${modelName(model)}, ${length} mm`
+}
+
+function purchaseWords(purchase: Purchase | null): string {
+  if (!purchase) return ''
+  const { owned, ordered, price, currency = '', note } = purchase
+  return [
+    ...(owned === undefined ? [] : [`${owned} owned`]),
+    ...(ordered === undefined ? [] : [`${ordered} ordered`]),
+    ...(price === undefined ? [] : [`${price} ${currency}`.trim()]),
+    ...(note === undefined ? [] : [`"${note}"`]),
+  ].join(', ')
+}
+
 function changedWords(what: string, from: string, to: string): string {
-  if (from === '') return `${what} set to ${to}.`
-  return to === '' ? `${what} cleared (was ${from}).` : `${what} changed from ${from} to ${to}.`
+  const words =
+    from === ''
+      ? `${what} set to ${to}`
+      : to === ''
+        ? `${what} cleared (was ${from})`
+        : `${what} changed from ${from} to ${to}`
+  return words.endsWith('.') ? words : `${words}.`
 }

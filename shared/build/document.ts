@@ -7,7 +7,7 @@ export const documentFormat = 'bayloom-build'
 export const documentVersion = 1
 
 /** Bounds that keep any accepted document within what the checker handles without a pause. */
-export const documentLimits = { parts: 12_000, joints: 24_000, models: 500, accepted: 2_000 } as const
+export const documentLimits = { parts: 12_000, joints: 24_000, models: 500, accepted: 2_000, purchases: 2_000 } as const
 
 export const toleranceStandards = ['atx', 'atx3', 'server'] as const
 
@@ -98,6 +98,22 @@ export const acceptedFindingSchema = z.strictObject({
 })
 export type AcceptedFinding = z.infer<typeof acceptedFindingSchema>
 
+/** What a person noted about buying one line of the parts list. Absent figures are not known, never zero. */
+export const purchaseSchema = z.strictObject({
+  /** Line of the parts list: model, and length where it differs from the model's. */
+  line: z.string().min(1).max(160),
+  owned: z.int().min(0).max(100_000).optional(),
+  ordered: z.int().min(0).max(100_000).optional(),
+  note: z.string().min(1).max(300).optional(),
+  /** For one piece. */
+  price: z.number().min(0).max(10_000_000).optional(),
+  currency: z
+    .string()
+    .regex(/^[A-Z]{3}$/, 'three capital letters, as "EUR"')
+    .optional(),
+})
+export type Purchase = z.infer<typeof purchaseSchema>
+
 const uniqueBy = (items: readonly Record<string, unknown>[], field: string, list: string, context: z.RefinementCtx) => {
   const seen = new Map<unknown, number>()
   items.forEach((item, i) => {
@@ -126,12 +142,15 @@ export const buildDocumentSchema = z
     parts: z.array(partSchema).max(documentLimits.parts),
     joints: z.array(jointSchema).max(documentLimits.joints),
     accepted: z.array(acceptedFindingSchema).max(documentLimits.accepted).default([]),
+    /** Absent while nobody noted anything, so that documents from before there was a parts list stay what they were. */
+    purchases: z.array(purchaseSchema).min(1).max(documentLimits.purchases).optional(),
   })
   .superRefine((document, context) => {
     uniqueBy(document.parts, 'id', 'parts', context)
     uniqueBy(document.parts, 'ref', 'parts', context)
     uniqueBy(document.joints, 'id', 'joints', context)
     uniqueBy(document.models, 'id', 'models', context)
+    uniqueBy(document.purchases ?? [], 'line', 'purchases', context)
   })
 export type BuildDocument = z.infer<typeof buildDocumentSchema>
 export type BuildDocumentInput = z.input<typeof buildDocumentSchema>

@@ -42,6 +42,12 @@ function invertOne(document: BuildDocument, change: Change): Change {
     }
     case 'updateSettings':
       return { op: 'updateSettings', settings: document.settings }
+    case 'setPurchase': {
+      const before = document.purchases?.find(({ line }) => line === change.line)
+      if (!before) return { op: 'setPurchase', line: change.line, purchase: null }
+      const { line, ...purchase } = before
+      return { op: 'setPurchase', line, purchase }
+    }
     case 'rename':
       return { op: 'rename', name: document.name, machine: document.machine ?? null }
   }

@@ -82,6 +82,9 @@ function touchOne(
     case 'updateSettings':
       write('settings')
       return
+    case 'setPurchase':
+      write(`purchases/${change.line}`)
+      return
     case 'rename':
       write('build', 'name')
       if (change.machine !== undefined) write('build', 'machine')

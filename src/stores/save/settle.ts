@@ -37,6 +37,8 @@ function whatOf(id: string, mine: BuildDocument, theirs: BuildDocument): string 
       return `own model ${key ?? ''}`
     case 'accepted':
       return 'an accepted finding'
+    case 'purchases':
+      return `parts list, ${key ?? ''}`
     case 'build':
       return `${key ?? 'name'} of the build`
     default:
@@ -65,6 +67,8 @@ function valueAt(id: string, document: BuildDocument): string {
       return document.models.some((model) => model.id === key) ? 'kept, with changes' : 'removed'
     case 'accepted':
       return document.accepted.find((accepted) => accepted.key === key)?.reason ?? 'not accepted'
+    case 'purchases':
+      return show(document.purchases?.find(({ line }) => line === key))
     case 'build':
       return show(key === 'machine' ? document.machine : document.name)
     default:
@@ -131,6 +135,8 @@ function thingsOf(change: Change): string[] {
       return [`accepted/${change.key}`]
     case 'updateSettings':
       return ['settings']
+    case 'setPurchase':
+      return [`purchases/${change.line}`]
     case 'rename':
       return ['build/name']
   }
