@@ -8,16 +8,12 @@ import type {
 import { created, ok, type Answer, type Call } from '../middleware/call.ts'
 import { askRound } from '../services/askRound.ts'
 import { Refusal } from '../services/refusal.ts'
-import { listRounds, readRules, setRules, type Reviewer } from '../services/roundList.ts'
+import { listRounds, readRules, setRules } from '../services/roundList.ts'
 import { endRound, giveVerdict } from '../services/roundService.ts'
+import { reviewerOf } from './reviewerOf.ts'
 import { userOf } from './signedIn.ts'
 
 type OfRound<Body = unknown> = Call<{ buildId: string; roundId: string }, unknown, Body>
-
-/** Whoever came through a policy of a build, as a member or as a guest. */
-function reviewerOf(call: Pick<Call, 'guest' | 'buildRole' | 'signedIn'>): Reviewer {
-  return call.guest ? { guest: call.guest } : memberOf(call)
-}
 
 function memberOf(call: Pick<Call, 'buildRole' | 'signedIn'>) {
   if (!call.buildRole) throw new Refusal('not-found')

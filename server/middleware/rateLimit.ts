@@ -34,11 +34,14 @@ export const rateLimits = {
     { per: 'link', most: 60, minutes: 15 },
   ],
   'change-password': [{ per: 'account', most: 10, minutes: 15, failuresOnly: true }],
+  'export-account': [{ per: 'account', most: 10, minutes: 60 }],
   invite: [
     { per: 'address', most: 120, minutes: 60 },
     { per: 'account', most: 60, minutes: 60 },
   ],
+  comment: [{ per: 'address', most: 240, minutes: 15 }],
   check: [{ per: 'account', most: 240, minutes: 1 }],
+  upload: [{ per: 'account', most: 60, minutes: 15 }],
   presence: [{ per: 'account', most: 240, minutes: 1 }],
 } as const satisfies Record<string, readonly Limit[]>
 export type RateLimitName = keyof typeof rateLimits

@@ -3,6 +3,7 @@ import { buildLinkRoutes } from './buildLinks.ts'
 import { buildRoutes } from './builds.ts'
 import { catalogRoutes } from './catalog.ts'
 import { checkRoutes } from './checks.ts'
+import { commentRoutes } from './comments.ts'
 import { healthRoutes } from './health.ts'
 import { invitationRoutes } from './invitations.ts'
 import { labelRoutes } from './labels.ts'
@@ -27,6 +28,7 @@ const resources: readonly AnyRoute[] = [
   ...mailChoiceRoutes,
   ...buildRoutes,
   ...revisionRoutes,
+  ...commentRoutes,
   ...memberRoutes,
   ...invitationRoutes,
   ...buildLinkRoutes,

@@ -17,10 +17,13 @@ export const revisionParams = z.object({
 })
 export const invitationParams = z.object({ buildId: idSchema, invitationId: idSchema })
 export const memberParams = z.object({ buildId: idSchema, userId: idSchema })
+export const sessionParams = z.object({ sessionId: idSchema })
 export const userParams = z.object({ userId: idSchema })
 export const linkParams = z.object({ buildId: idSchema, linkId: idSchema })
 export const guestParams = z.object({ buildId: idSchema, guestId: idSchema })
 export const roundParams = z.object({ buildId: idSchema, roundId: idSchema })
+export const threadParams = z.object({ buildId: idSchema, threadId: idSchema })
+export const commentParams = z.object({ buildId: idSchema, commentId: idSchema })
 export const messageParams = z.object({ messageId: idSchema })
 /** What an unsubscribe link carries: kind, address and seal. */
 export const sealedParams = z.object({ token: z.string().min(20).max(600) })

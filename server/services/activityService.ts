@@ -32,7 +32,8 @@ export const toActivity = (row: ActivityRow): Activity => ({
   what: { kind: row.kind, ...row.details } as Happening,
 })
 
-function toAuthor(row: ActivityRow): Author {
+/** Who did it, from the columns of the two kinds of people. */
+export function toAuthor(row: Pick<ActivityRow, 'user_id' | 'user_name' | 'guest_id' | 'guest_name'>): Author {
   if (row.user_id !== null && row.user_name !== null)
     return { kind: 'member', userId: row.user_id, name: row.user_name }
   if (row.guest_id !== null && row.guest_name !== null)

@@ -6,9 +6,12 @@ import { demoFiles } from './004-demo-files.ts'
 import { links } from './005-links.ts'
 import { activity } from './006-activity.ts'
 import { revisions } from './007-revisions.ts'
+import { sessions } from './008-sessions.ts'
+import { comments } from './009-comments.ts'
 import { live } from './010-live.ts'
 import { mail } from './011-mail.ts'
 import { rounds } from './012-rounds.ts'
+import { modelPhotos } from './016-model-photos.ts'
 
 /** Every migration in order. A migration that has shipped is never changed; add the next number. */
 export const migrations: readonly Migration[] = [
@@ -19,7 +22,10 @@ export const migrations: readonly Migration[] = [
   links,
   activity,
   revisions,
+  sessions,
+  comments,
   live,
   mail,
   rounds,
+  modelPhotos,
 ]
