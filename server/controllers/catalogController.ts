@@ -19,7 +19,9 @@ export async function putCatalogModel(
 ): Promise<Answer> {
   const { model, note } = call.body
   refuseOtherId(call.params.modelId, model.id)
-  return ok(await call.context.catalog.putModel(model, userOf(call).id, note ?? null))
+  const put = await call.context.catalog.putModel(model, userOf(call).id, note ?? null)
+  call.context.jobs.wake()
+  return ok(put)
 }
 
 export async function readExamples({ context }: Call): Promise<Answer> {

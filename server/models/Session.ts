@@ -15,6 +15,9 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   declare expiresAt: Date
   declare revokedAt: CreationOptional<Date | null>
   declare revokedBecause: CreationOptional<string | null>
+  /** How the browser names itself; anybody may make that up. */
+  declare browser: CreationOptional<string | null>
+  declare lastSeenAt: CreationOptional<Date>
 
   static define(database: Sequelize): void {
     Session.init(
@@ -25,6 +28,8 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
         expiresAt: DataTypes.DATE,
         revokedAt: DataTypes.DATE,
         revokedBecause: DataTypes.TEXT,
+        browser: DataTypes.TEXT,
+        lastSeenAt: { type: DataTypes.DATE, defaultValue: DataTypes.NOW },
       },
       { sequelize: database, tableName: 'sessions' },
     )

@@ -1,3 +1,5 @@
+import { z } from 'zod'
+import { deleteAccountRequestSchema, leavingSchema } from '#shared/contract/account.ts'
 import {
   askResetRequestSchema,
   changePasswordRequestSchema,
@@ -6,6 +8,7 @@ import {
   userSchema,
 } from '#shared/contract/session.ts'
 import { createPasswordReset, patchAccount, putPassword, usePasswordReset } from '../controllers/accountController.ts'
+import { deleteOwnAccount, downloadAccount, readLeaving } from '../controllers/leavingController.ts'
 import { tokenParams } from './params.ts'
 import { defineRoute } from './route.ts'
 
@@ -28,6 +31,33 @@ export const accountRoutes = [
     rateLimit: 'change-password',
     answers: { 204: null },
     controller: putPassword,
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/account/export',
+    policy: 'signed-in',
+    summary: 'Everything of one’s own as one file',
+    rateLimit: 'export-account',
+    answers: { 200: z.unknown() },
+    controller: downloadAccount,
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/account/leaving',
+    policy: 'signed-in',
+    summary: 'What deleting one’s account would do to builds',
+    answers: { 200: leavingSchema },
+    controller: readLeaving,
+  }),
+  defineRoute({
+    method: 'delete',
+    path: '/api/account',
+    policy: 'signed-in',
+    summary: 'Delete one’s own account; builds that others work in stay, under “former member”',
+    body: deleteAccountRequestSchema,
+    rateLimit: 'change-password',
+    answers: { 204: null },
+    controller: deleteOwnAccount,
   }),
   defineRoute({
     method: 'post',

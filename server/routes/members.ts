@@ -1,5 +1,6 @@
+import { transferRequestSchema } from '#shared/contract/account.ts'
 import { changeMemberRequestSchema, membersAnswerSchema, memberSchema } from '#shared/contract/build.ts'
-import { deleteMember, patchMember, readMembers } from '../controllers/memberController.ts'
+import { deleteMember, patchMember, postOwnership, readMembers } from '../controllers/memberController.ts'
 import { buildParams, memberParams } from './params.ts'
 import { defineRoute } from './route.ts'
 
@@ -31,5 +32,15 @@ export const memberRoutes = [
     params: memberParams,
     answers: { 204: null },
     controller: deleteMember,
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/api/builds/:buildId/ownership',
+    policy: 'own-build',
+    summary: 'Hand the build over to another member, and stay as owner or editor, or leave',
+    params: buildParams,
+    body: transferRequestSchema,
+    answers: { 204: null },
+    controller: postOwnership,
   }),
 ]

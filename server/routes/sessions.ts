@@ -1,5 +1,9 @@
+import { z } from 'zod'
+import { ownSessionSchema } from '#shared/contract/account.ts'
 import { registerRequestSchema, sessionSchema, signInRequestSchema } from '#shared/contract/session.ts'
 import { createAccount, createSession, deleteSession, readSession } from '../controllers/sessionController.ts'
+import { deleteOtherSessions, deleteOwnSession, readOwnSessions } from '../controllers/ownSessionController.ts'
+import { sessionParams } from './params.ts'
 import { defineRoute } from './route.ts'
 
 export const sessionRoutes = [
@@ -28,6 +32,31 @@ export const sessionRoutes = [
     summary: 'Sign out',
     answers: { 204: null },
     controller: deleteSession,
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/sessions',
+    policy: 'signed-in',
+    summary: 'One’s own sessions, the latest used first',
+    answers: { 200: z.array(ownSessionSchema) },
+    controller: readOwnSessions,
+  }),
+  defineRoute({
+    method: 'delete',
+    path: '/api/sessions',
+    policy: 'signed-in',
+    summary: 'End every session of one’s own but this one',
+    answers: { 204: null },
+    controller: deleteOtherSessions,
+  }),
+  defineRoute({
+    method: 'delete',
+    path: '/api/sessions/:sessionId',
+    policy: 'signed-in',
+    summary: 'End one session of one’s own',
+    params: sessionParams,
+    answers: { 204: null },
+    controller: deleteOwnSession,
   }),
   defineRoute({
     method: 'post',

@@ -1,9 +1,10 @@
 import { randomUUID } from 'node:crypto'
-import { QueryTypes, type Transaction } from 'sequelize'
+import { Op, QueryTypes, type Transaction } from 'sequelize'
 import { documentFormat, documentVersion, buildDocumentSchema, type BuildDocument } from '#shared/build/document.ts'
 import { readBuild } from '#shared/build/read.ts'
 import { resolve } from '#shared/build/resolve.ts'
 import type { BuildRole, BuildSummary } from '#shared/contract/build.ts'
+import { publish } from '../events/publish.ts'
 import { readExample } from '../files/exampleFiles.ts'
 import { Build, BuildMember, BuildRevision, Guest } from '../models/index.ts'
 import { findOpenBuild, findSummary, type OpenBuild } from './buildList.ts'
@@ -82,7 +83,15 @@ export async function setArchived(
   buildId: string,
   archived: boolean,
 ): Promise<BuildSummary> {
-  await Build.update({ archivedAt: archived ? new Date() : null }, { where: { id: buildId } })
+  await context.database.transaction(async (transaction) => {
+    const archivedAt = archived ? new Date() : null
+    const [changed] = await Build.update(
+      { archivedAt },
+      { where: { id: buildId, archivedAt: archived ? null : { [Op.ne]: null } }, transaction },
+    )
+    const kind = archived ? 'build-archived' : 'build-restored'
+    if (changed > 0) await publish(context, buildId, { userId }, { kind }, transaction)
+  })
   const summary = await findSummary(context.database, buildId, userId)
   if (!summary) throw new Refusal('not-found')
   return summary

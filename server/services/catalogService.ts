@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { QueryTypes, type Sequelize } from 'sequelize'
+import { QueryTypes, type Sequelize, type Transaction } from 'sequelize'
 import { indexCatalog, type Catalog, type CatalogIndex } from '#shared/catalog/catalog.ts'
 import type { Model } from '#shared/catalog/model.ts'
 import { catalogProblems } from '#shared/catalog/problems.ts'
@@ -40,10 +40,20 @@ export function makeCatalogService(database: Sequelize, shipped: Catalog): Catal
         await takeLock(database, 'catalog', transaction)
         refuseUnfit(model, await current())
         await CatalogRevision.create({ modelId: model.id, model, note, authorId }, { transaction })
+        await askForNewVerdicts(database, model.id, transaction)
       })
       return model
     },
   }
+}
+
+/** Builds that name the model are checked anew, by the job that checks builds: their verdict may rest on its figures. */
+async function askForNewVerdicts(database: Sequelize, modelId: string, transaction: Transaction): Promise<void> {
+  await database.query(
+    `UPDATE builds b SET checked_revision = 0, check_failed_revision = 0 FROM build_revisions r
+     WHERE r.build_id = b.id AND r.revision = b.revision AND position($1 in r.document::text) > 0`,
+    { bind: [JSON.stringify(modelId)], transaction },
+  )
 }
 
 /** A model must fit the catalog that it joins, and keep the connectors that builds may be joined to. */

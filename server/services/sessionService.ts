@@ -129,7 +129,9 @@ export async function refreshSession(context: Context, token: string): Promise<I
       return null
     }
     await stored.update({ replacedAt: new Date() }, { transaction })
-    await User.update({ lastSeenAt: new Date() }, { where: { id: signedIn.user.id }, transaction })
+    const lastSeenAt = new Date()
+    await User.update({ lastSeenAt }, { where: { id: signedIn.user.id }, transaction })
+    await Session.update({ lastSeenAt }, { where: { id: stored.sessionId }, transaction })
     return issue(context, signedIn, await addRefreshToken(stored.sessionId, transaction))
   })
 }

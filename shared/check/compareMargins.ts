@@ -34,10 +34,14 @@ function worstRows(rows: readonly LedgerRow[]): Map<string, Limited> {
 
 const isLimited = (row: LedgerRow): row is Limited => row.limit !== null && row.margin !== null
 
-/** How near to the limit: 1 is on it. A voltage strains by being low. */
+/** A twentieth below nominal, as ATX allows: what a voltage may lose, for the order of the rows alone. */
+const band = 1 / 0.95 - 1
+
+/** How near to the limit: 1 is on it. A voltage strains by what it has lost of its band. */
 function strainOf(row: { load: number; limit: number } | null, unit: LedgerRow['unit']): number {
-  if (!row) return -1
-  return unit === 'V' ? row.limit / Math.max(row.load, 1e-9) : row.load / Math.max(row.limit, 1e-9)
+  if (!row) return -Infinity
+  const room = Math.max(row.limit, 1e-9)
+  return unit === 'V' ? 1 - (row.load - row.limit) / (band * room) : row.load / room
 }
 
 const decimals: Readonly<Record<LedgerRow['unit'], number>> = { A: 1, W: 0, V: 2 }

@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import type { Catalog } from '#shared/catalog/catalog.ts'
 import type { Model } from '#shared/catalog/model.ts'
+import { openBuildSchema } from '#shared/contract/build.ts'
 import { catalogAnswerSchema, ownModelSchema } from '#shared/contract/catalog.ts'
 import { problemSchema } from '#shared/contract/problems.ts'
 import { CatalogRevision } from '../../server/models/index.ts'
@@ -90,6 +91,28 @@ describe('the catalog', () => {
     const response = await put(editor, model)
     expect(response.status).toBe(400)
     expect(errorsOf(response)).toEqual(paths)
+  })
+
+  test('has builds that name a corrected model checked anew, and no others', async () => {
+    const shipped = shippedCable()
+    const document = (name: string, parts: object[]) => ({
+      format: 'bayloom-build',
+      version: 1,
+      name,
+      parts,
+      joints: [],
+    })
+    const make = async (name: string, parts: object[]) => {
+      const response = await member.post('/api/builds/import', { document: document(name, parts) })
+      return openBuildSchema.parse(response.body).id
+    }
+    const naming = await make('Naming', [{ id: 'w1', ref: 'W1', model: shipped.id }])
+    const other = await make('Other', [])
+    const isChecked = async (id: string) => openBuildSchema.parse((await member.get(`/api/builds/${id}`)).body).checked
+    await put(editor, { ...shipped, name: 'Corrected once more' }, shipped.id)
+    expect([await isChecked(naming), await isChecked(other)]).toEqual([false, true])
+    await api.context.jobs.drain()
+    expect(await isChecked(naming)).toBe(true)
   })
 
   test('is not changed by members', async () => {
