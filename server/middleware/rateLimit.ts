@@ -35,7 +35,6 @@ export const rateLimits = {
   ],
   'change-password': [{ per: 'account', most: 10, minutes: 15, failuresOnly: true }],
   'export-account': [{ per: 'account', most: 10, minutes: 60 }],
-  'export-account': [{ per: 'account', most: 10, minutes: 60 }],
   invite: [
     { per: 'address', most: 120, minutes: 60 },
     { per: 'account', most: 60, minutes: 60 },

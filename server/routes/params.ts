@@ -18,7 +18,6 @@ export const revisionParams = z.object({
 export const invitationParams = z.object({ buildId: idSchema, invitationId: idSchema })
 export const memberParams = z.object({ buildId: idSchema, userId: idSchema })
 export const sessionParams = z.object({ sessionId: idSchema })
-export const sessionParams = z.object({ sessionId: idSchema })
 export const userParams = z.object({ userId: idSchema })
 export const linkParams = z.object({ buildId: idSchema, linkId: idSchema })
 export const guestParams = z.object({ buildId: idSchema, guestId: idSchema })

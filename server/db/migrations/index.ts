@@ -7,7 +7,6 @@ import { links } from './005-links.ts'
 import { activity } from './006-activity.ts'
 import { revisions } from './007-revisions.ts'
 import { sessions } from './008-sessions.ts'
-import { sessions } from './008-sessions.ts'
 import { comments } from './009-comments.ts'
 import { live } from './010-live.ts'
 import { mail } from './011-mail.ts'
@@ -23,7 +22,6 @@ export const migrations: readonly Migration[] = [
   links,
   activity,
   revisions,
-  sessions,
   sessions,
   comments,
   live,
