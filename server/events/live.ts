@@ -10,7 +10,7 @@ import { whyEnd, type Reader } from './access.ts'
 import { catchUp, greet } from './catchUp.ts'
 import { makeListener } from './listener.ts'
 import { makeAttendance } from './attendance.ts'
-import { accessChannel, activityChannel, noticesChannel, presenceChannel } from './publish.ts'
+import { accessChannel, activityChannel, noticesChannel, presenceChannel, readActivityWord } from './publish.ts'
 import { openStream, type Stream } from './stream.ts'
 
 /** Everything that one process shows live to the browsers connected to it. */
@@ -41,12 +41,12 @@ const beat_ms = 20_000
 
 const personOf = (reader: Reader): string => (reader.kind === 'member' ? reader.userId : reader.guestId)
 
-/** Makes the live side of a process. `onActivity` is called for every new line, so that waiting work is looked at. */
+/** Makes the live side of a process. `onNews` is called where people are to be told, so that the waiting job is done at once. */
 export function makeLive(
   config: Config,
   database: Sequelize,
   log: Logger,
-  onActivity: () => void,
+  onNews: () => void,
   pause_ms: number = beat_ms,
 ): Live {
   const streams = new Set<Stream>()
@@ -59,13 +59,13 @@ export function makeLive(
     url: config.databaseUrl,
     channels: [activityChannel, noticesChannel, presenceChannel, accessChannel],
     onHeard(channel, payload) {
-      if (channel === activityChannel) hearActivity(Number(payload))
+      if (channel === activityChannel) hearActivity(payload)
       else if (channel === noticesChannel) void attempt(() => tellUnread(payload))
       else if (channel === presenceChannel) attendance.hear(payload)
       else void attempt(() => recheck(concerned(payload)))
     },
     onGap() {
-      onActivity()
+      onNews()
       for (const stream of streams) void attempt(() => catchUp(database, stream))
       for (const user of readers()) void attempt(() => tellUnread(user))
       void attempt(() => recheck([...streams]))
@@ -83,8 +83,9 @@ export function makeLive(
     }
   }
 
-  function hearActivity(id: number): void {
-    onActivity()
+  function hearActivity(word: string): void {
+    const { id, isNews } = readActivityWord(word)
+    if (isNews) onNews()
     heard.push(id)
     telling ??= attempt(tellHeard).finally(() => (telling = null))
   }

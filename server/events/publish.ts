@@ -7,8 +7,13 @@ import type { Context } from '../services/context.ts'
 /** Who caused it: a person with an account, or a guest of a link. */
 export type Cause = { userId: string } | { guestId: string }
 
-/** The channel on which every process hears of new activity; its payload is the row's id. */
+/** The channel on which every process hears of new activity: the row's id, with "news" behind it where a job waits. */
 export const activityChannel = 'bayloom_activity'
+export const activityWord = (id: number, isNewsToo: boolean): string => (isNewsToo ? `${id} news` : String(id))
+export const readActivityWord = (word: string): { id: number; isNews: boolean } => ({
+  id: Number(word.split(' ')[0]),
+  isNews: word.endsWith(' news'),
+})
 /** Says whose notifications changed: the person's id. */
 export const noticesChannel = 'bayloom_notices'
 /** Who has which build open, said from process to process. */
@@ -50,6 +55,7 @@ export async function publish(
   )
   const id = Number(rows[0]?.id)
   if (isNews(kind)) await enqueue(context.database, 'news', { activityId: id }, transaction)
-  await context.database.query('SELECT pg_notify($1, $2)', { bind: [activityChannel, String(id)], transaction })
+  const word = activityWord(id, isNews(kind))
+  await context.database.query('SELECT pg_notify($1, $2)', { bind: [activityChannel, word], transaction })
   return id
 }

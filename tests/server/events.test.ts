@@ -105,6 +105,21 @@ describe('what happens in a build', () => {
     expect(again.left().filter((name) => name === 'activity')).toEqual([])
   })
 
+  test('is not missed where the database cuts the connection that hears of it', async () => {
+    const reader = await listen(editor)
+    await reader.next('hello')
+    const cut = await api.context.database.query(
+      `SELECT pg_terminate_backend(pid) FROM pg_stat_activity
+       WHERE datname = current_database() AND application_name = 'bayloom events'`,
+      { type: QueryTypes.SELECT },
+    )
+    expect(cut).toHaveLength(1)
+    const ids = [await say(named(1)), await say(named(2))]
+    expect([(await reader.next('activity')).id, (await reader.next('activity')).id]).toEqual(ids)
+    await say(named(3))
+    expect((await reader.next('activity')).what).toEqual(named(3))
+  })
+
   test('is not replayed to whoever missed very much: they read everything anew', async () => {
     await api.context.database.query(
       `INSERT INTO activity (build_id, user_id, kind, details)
@@ -188,7 +203,11 @@ describe('presence', () => {
     const { client } = await guestOfLink()
     await listen(client, `?tab=${tabG}`)
     const three = await reader.next('presence', (present) => present.length === 3)
-    expect(three.map(({ by }) => ('name' in by ? by.name : '')).sort()).toEqual(['Edwin Editor', 'Gil Guest', 'Olga Owner'])
+    expect(three.map(({ by }) => ('name' in by ? by.name : '')).sort()).toEqual([
+      'Edwin Editor',
+      'Gil Guest',
+      'Olga Owner',
+    ])
     expect((await editor.put(`/api/builds/${buildId}/presence`, { tab: tabB, chosen: ['p1'] })).status).toBe(204)
     await reader.next('presence', (present) => present.some(({ tab, chosen }) => tab === tabB && chosen[0] === 'p1'))
     other.close()
