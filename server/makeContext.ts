@@ -10,6 +10,7 @@ import { makeCatalogService } from './services/catalogService.ts'
 import { makeCheckService } from './services/checkService.ts'
 import { makeComparisonService } from './services/comparisonService.ts'
 import type { Context } from './services/context.ts'
+import { makePaperService } from './services/paperService.ts'
 import { loadSecrets } from './services/secretService.ts'
 
 export interface OwnedContext extends Context {
@@ -27,12 +28,14 @@ export function makeContext(
   const database = openDatabase(config.databaseUrl, config.databasePool)
   const catalog = makeCatalogService(database, loadCatalogFiles())
   const checks = makeCheckService()
+  const papers = makePaperService()
   const shared: JobContext = {
     config,
     database,
     secrets: { accessToken: '', csrf: '', unsubscribe: '' },
     catalog,
     checks,
+    papers,
     comparisons: makeComparisonService(),
     log,
     publicUrl: config.publicUrl ?? `http://${config.host}:${config.port}`,
@@ -48,6 +51,7 @@ export function makeContext(
       await context.live.stop()
       await jobs.stop()
       checks.close()
+      papers.close()
       await database.close()
     },
   })

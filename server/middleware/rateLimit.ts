@@ -42,6 +42,7 @@ export const rateLimits = {
   comment: [{ per: 'address', most: 240, minutes: 15 }],
   check: [{ per: 'account', most: 240, minutes: 1 }],
   upload: [{ per: 'account', most: 60, minutes: 15 }],
+  paper: [{ per: 'account', most: 60, minutes: 1 }],
   presence: [{ per: 'account', most: 240, minutes: 1 }],
 } as const satisfies Record<string, readonly Limit[]>
 export type RateLimitName = keyof typeof rateLimits

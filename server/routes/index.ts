@@ -7,6 +7,7 @@ import { commentRoutes } from './comments.ts'
 import { healthRoutes } from './health.ts'
 import { invitationRoutes } from './invitations.ts'
 import { labelRoutes } from './labels.ts'
+import { lidSheetRoutes } from './lidSheets.ts'
 import { liveRoutes } from './live.ts'
 import { mailboxRoutes } from './mailbox.ts'
 import { mailChoiceRoutes } from './mailChoices.ts'
@@ -34,6 +35,7 @@ const resources: readonly AnyRoute[] = [
   ...buildLinkRoutes,
   ...roundRoutes,
   ...labelRoutes,
+  ...lidSheetRoutes,
   ...liveRoutes,
   ...catalogRoutes,
   ...ownModelRoutes,

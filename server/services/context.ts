@@ -6,6 +6,7 @@ import type { JobLoop } from '../jobs/jobLoop.ts'
 import type { CatalogService } from './catalogService.ts'
 import type { CheckService } from './checkService.ts'
 import type { ComparisonService } from './comparisonService.ts'
+import type { PaperService } from './paperService.ts'
 import type { Secrets } from './secretService.ts'
 
 /** What every use case may need, made once at start. */
@@ -15,6 +16,7 @@ export interface Context {
   secrets: Secrets
   catalog: CatalogService
   checks: CheckService
+  papers: PaperService
   comparisons: ComparisonService
   jobs: JobLoop
   live: Live

@@ -119,6 +119,7 @@ const expectedPolicies: Readonly<Record<string, PolicyName>> = {
   'post /api/links/:token/guests': 'anybody',
   'delete /api/guest': 'anybody',
   'post /api/builds/:buildId/labels': 'see-build',
+  'post /api/builds/:buildId/lid-sheet': 'see-build',
   'get /api/builds/:buildId/events': 'see-build',
   'put /api/builds/:buildId/presence': 'see-build',
   'get /api/builds/:buildId/activity': 'see-build',

@@ -42,24 +42,33 @@ const small = smallest_pt
 const names = (drive: LidDrive, others: readonly LidDrive[]): string =>
   [drive, ...others].map(({ ref }) => ref).join(' and ')
 
+/** "3 TB" of "3 TB SAS". */
+const shortCapacity = (capacity: string): string => /^(about )?\S+ \S+/.exec(capacity)?.[0] ?? capacity
+
+/** Designation and capacity, shorter where there is little room. */
+function whatFits(drive: LidDrive, others: readonly LidDrive[], room: number): string {
+  const name = names(drive, others)
+  const whole = `${name} · ${drive.capacity}`
+  return widthOf(whole, small) <= room ? whole : `${name} · ${shortCapacity(drive.capacity)}`
+}
+
 const isStrongRole = (role: string): boolean => role !== '' && role !== 'data'
 
 function inOneLine(cell: Cell, number: string, drive: LidDrive | undefined, others: readonly LidDrive[]): PageMark[] {
   const { look, x, y, width, height } = cell
   const { inks, density } = look
-  const at = y + height / 2 + density.bay_pt * 0.127
-  const place = line(x + pad, at, number, density.bay_pt, { weight: 700, colour: drive ? inks.ink : inks.soft })
-  if (!drive) return [...place, ...line(x + pad + 9, at, 'empty', small, { colour: inks.soft })]
+  const size = density.bay_pt + 3
+  const at = y + height / 2 + size * 0.127
+  const from = x + pad + widthOf('00', size, 700) + 2.4
+  const place = line(x + pad, at, number, size, { weight: 700, colour: drive ? inks.ink : inks.soft })
+  if (!drive) return [...place, ...line(from, at, 'empty', small, { colour: inks.soft })]
   const role = widthOf(drive.role, small, 700)
-  const left = x + pad + 9 + Math.max(15, widthOf(drive.tail, density.bay_pt - 1, 700) + 2)
-  const tail = { weight: 700 as const, colour: inks.ink, width: width * 0.4 }
+  const left = from + Math.max(15, Math.min(width * 0.4, widthOf(drive.tail, size - 1.5, 700)) + 2)
+  const room = x + width - pad - role - 1 - left
   return [
     ...place,
-    ...line(x + pad + 9, at, drive.tail, density.bay_pt - 1, tail),
-    ...line(left, at, `${names(drive, others)} · ${drive.capacity}`, small, {
-      colour: inks.ink,
-      width: x + width - pad - role - 1 - left,
-    }),
+    ...line(from, at, drive.tail, size - 1.5, { weight: 700, colour: inks.ink, width: width * 0.4 }),
+    ...line(left, at, whatFits(drive, others, room), small, { colour: inks.ink, width: room }),
     ...roleMark(cell, drive, x + width - pad, at),
   ]
 }
@@ -80,7 +89,7 @@ function inTwoLines(cell: Cell, number: string, drive: LidDrive | undefined, oth
       colour: inks.ink,
       width: x + width - pad - left,
     }),
-    ...line(x + pad, bottom, `${names(drive, others)} · ${drive.capacity}`, small, {
+    ...line(x + pad, bottom, whatFits(drive, others, width - 2 * pad - role - 1), small, {
       colour: inks.ink,
       width: width - 2 * pad - role - 1,
     }),
@@ -112,8 +121,7 @@ function below(cell: Cell, number: string, drive: LidDrive | undefined, others: 
     { words: bare, size: 8.5 },
     { words: bare, size: small },
   ].find(({ words, size }) => widthOf(words, size, 700) <= room) ?? { words: bare, size: small }
-  const capacity =
-    widthOf(drive.capacity, small) <= room ? drive.capacity : drive.capacity.split(' ').slice(0, 2).join(' ')
+  const capacity = widthOf(drive.capacity, small) <= room ? drive.capacity : shortCapacity(drive.capacity)
   return [
     ...place,
     ...line(middle, of(0.4), tail.words, tail.size, { ...centred, weight: 700 }),

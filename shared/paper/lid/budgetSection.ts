@@ -9,19 +9,19 @@ export function budgetSection(look: Look, { budgets, startMoments }: LidContent,
   if (budgets.length === 0) return []
   const { body_pt } = look.density
   const wishes = [
-    wish([...budgets.map((budget) => loadWords(budget, budget.start)), 'at start'], body_pt),
+    wish([...budgets.map((budget) => loadWords(budget, budget.start)), 'at start'], body_pt, 700),
     wish(
       budgets.map((budget) => leftWords(budget, budget.start)),
       body_pt,
     ),
-    wish([...budgets.map((budget) => loadWords(budget, budget.running)), 'running'], body_pt),
+    wish([...budgets.map(runningWords), 'running'], body_pt),
     wish(
       budgets.map((budget) => leftWords(budget, budget.running)),
       body_pt,
     ),
   ] as const
   const numbers = wishes.reduce((sum, one) => sum + one, 0)
-  const bar = width - numbers > 45 ? 13 : 0
+  const bar = width - numbers > 41 ? 13 : 0
   const withBar = bar > 0
   const name = Math.max(width * 0.24, width - numbers - bar)
   const shrink = Math.min(1, (width - bar - name) / numbers)
@@ -46,7 +46,7 @@ export function budgetSection(look: Look, { budgets, startMoments }: LidContent,
           { words: loadWords(budget, budget.start), isStrong: overOf(budget.start) },
           { words: leftWords(budget, budget.start), isStrong: overOf(budget.start) },
           ...(withBar ? [{ words: '', draw: barOf(look, worst) }] : []),
-          { words: loadWords(budget, budget.running), isStrong: overOf(budget.running) },
+          { words: runningWords(budget), isStrong: overOf(budget.running) },
           { words: leftWords(budget, budget.running), isStrong: overOf(budget.running) },
         ])
       }),
@@ -63,6 +63,13 @@ export function loadWords({ unit, about }: LidBudget, load: LidLoad | null): str
   if (!load) return '-'
   const limit = load.limit === null ? '?' : number(load.limit, unit)
   return `${about ? 'about\u00a0' : ''}${number(load.load, unit)} of\u00a0${limit}\u00a0${unit}`
+}
+
+/** The limit is said again only where it is another one, as a peak allowed at start. */
+function runningWords(budget: LidBudget): string {
+  const { start, running, unit, about } = budget
+  if (!start || !running || running.limit === null || running.limit !== start.limit) return loadWords(budget, running)
+  return `${about ? 'about\u00a0' : ''}${number(running.load, unit)}\u00a0${unit}`
 }
 
 /** "3.5 A", "over by 0.5 A", "limit unknown" */

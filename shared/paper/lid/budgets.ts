@@ -90,7 +90,13 @@ function leadBudgets(build: ResolvedBuild, rows: readonly LedgerRow[]): LidBudge
     if (known) known.refs.push(part.ref)
     else lines.set(key, { budget, refs: [part.ref], hop })
   }
-  return [...lines.values()].map(({ budget, refs, hop }) => ({ ...budget, name: `${refRanges(refs)}${hop}` }))
+  return [...lines.values()].map(({ budget, refs, hop }) => ({ ...budget, name: `${shortRanges(refs)}${hop}` }))
+}
+
+/** Many that are not in a row are named by the first and the last. */
+function shortRanges(refs: readonly string[]): string {
+  const words = refRanges(refs)
+  return words.split(', ').length <= 6 ? words : `${refs[0]} to ${refs.at(-1)} (${refs.length} of them)`
 }
 
 /** The hop that comes nearest its limit at any moment. */

@@ -58,7 +58,7 @@ export function diagramPages(input: DiagramInput, inks: Inks, area: Area): Diagr
 
   const marks = svgMarks(markupOf(input), { scale: readable, dx: 0, dy: 0 }, inkOf(inks))
   const nodes = input.drawing.nodes.filter(({ kind }) => kind !== 'case' && kind !== 'backplane')
-  const texts = marks.filter((mark) => mark.kind === 'text').map(extentOf)
+  const texts = marks.filter((mark) => mark.kind === 'text' || isPill(mark)).map(extentOf)
   const across = [
     ...nodes.map(({ x, width }): Span => [x * readable, (x + width) * readable]),
     ...texts.map(({ left, right }): Span => [left, right]),
@@ -72,16 +72,22 @@ export function diagramPages(input: DiagramInput, inks: Inks, area: Area): Diagr
 
   const many = (columns.length - 1) * (rows.length - 1)
   return rows.slice(0, -1).flatMap((top, row) =>
-    columns.slice(0, -1).map((left, column): DiagramPage => {
+    columns.slice(0, -1).flatMap((left, column): DiagramPage[] => {
       const tile = { x: left, y: top, width: columns[column + 1]! - left, height: rows[row + 1]! - top }
       const sheet = row * (columns.length - 1) + column + 1
-      return {
-        title: `Diagram, sheet ${sheet} of ${many}: row ${row + 1}, column ${column + 1}`,
-        marks: tileMarks(marks, tile, area),
-      }
+      const title = `Diagram, sheet ${sheet} of ${many}: row ${row + 1}, column ${column + 1}`
+      const { shapes, texts: words } = tileMarks(marks, tile, area)
+      // Runs that only pass need no sheet of their own.
+      if (words.length === 0) return []
+      const { width, height } = tile
+      return [{ title, marks: [{ kind: 'window', x: area.x, y: area.y, width, height, marks: shapes }, ...words] }]
     }),
   )
 }
+
+/** The frame of a number on a run. */
+const isPill = (mark: PageMark): boolean =>
+  mark.kind === 'box' && mark.width < 80 * readable && mark.height < 24 * readable
 
 /** Words at open ends stand out beyond the arrangement. */
 function withRoom({ drawing }: DiagramInput) {
@@ -113,7 +119,7 @@ function inkOf(inks: Inks): (colour: string) => string {
 }
 
 /** What of the drawing lies in a tile, moved to where it stands on the page. Text is never cut: it stands on top. */
-function tileMarks(marks: readonly PageMark[], tile: Area, area: Area): PageMark[] {
+function tileMarks(marks: readonly PageMark[], tile: Area, area: Area) {
   const here = { left: tile.x, top: tile.y, right: tile.x + tile.width, bottom: tile.y + tile.height }
   const shapes: PageMark[] = []
   const texts: PageMark[] = []
@@ -124,8 +130,7 @@ function tileMarks(marks: readonly PageMark[], tile: Area, area: Area): PageMark
     if (mark.kind !== 'text') shapes.push(shifted)
     else if (isIn((extent.left + extent.right) / 2, (extent.top + extent.bottom) / 2, here)) texts.push(shifted)
   }
-  const { width, height } = tile
-  return [{ kind: 'window', x: area.x, y: area.y, width, height, marks: shapes }, ...texts]
+  return { shapes, texts }
 }
 
 const isIn = (x: number, y: number, { left, top, right, bottom }: Extent): boolean =>

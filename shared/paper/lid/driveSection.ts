@@ -4,7 +4,7 @@ import type { Look } from './style.ts'
 import { shareWidth, tableHead, tableRow, wish, type Column } from './table.ts'
 
 /** One row a drive: what feeds it and what talks to it, from the far end to the plug. */
-export function driveSection(look: Look, { drives, maps }: LidContent, width: number): Section[] {
+export function driveSection(look: Look, { drives }: LidContent, width: number): Section[] {
   if (drives.length === 0) return []
   const { body_pt, bay_pt } = look.density
   const size = Math.min(bay_pt, body_pt + 1.5)
@@ -67,8 +67,7 @@ export function driveSection(look: Look, { drives, maps }: LidContent, width: nu
       ),
     },
   ]
-
-  function bayWords({ bay }: LidDrive): string {
-    return bay || (maps.length > 0 ? 'none' : '-')
-  }
 }
+
+/** A drive outside the bays has a dash. */
+const bayWords = ({ bay }: LidDrive): string => bay || '–'

@@ -76,7 +76,7 @@ export function firstHead(inks: Inks, content: LidContent, code: Code | null, { 
       below += 3.5
     }
   if (code) marks.push({ kind: 'code', x: x + width - side, y, size: side, modules: code })
-  const bottom = Math.max(at, below, code ? y + side : 0) + 2
+  const bottom = Math.max(at, below, code ? y + side + 1.2 : 0) + 2
   marks.push(rule(x, bottom, width, 0.5, inks.ink))
   return { marks, bottom: bottom + 2.5 }
 }

@@ -6,6 +6,7 @@ import { counted } from '../../check/words.ts'
 import type { ReviewState } from '../../contract/reviewState.ts'
 import { carriesPower, outletsOf } from '../../layout/carries.ts'
 import { checkedWords } from '../../review/words.ts'
+import { refRanges } from '../diagram/partsBlock.ts'
 import { withinLimits } from '../diagram/titleBlock.ts'
 import { dataPathWords } from '../dataWays.ts'
 import { powerWays, powerWords, wayWords } from '../powerWays.ts'
@@ -67,7 +68,12 @@ const namesOf = ({ approval }: ReviewState): string => (approval?.by ?? []).map(
 function summaryOf(build: ResolvedBuild): string {
   const of = (kind: string) => build.parts.filter(({ model }) => model.kind === kind)
   const bays = of('case').reduce((sum, { model }) => sum + model.bays.length, 0)
-  const supplies = of('supply').map(({ part, model }) => `${part.ref} ${part.name ?? model.name}`)
+  const byName = new Map<string, string[]>()
+  for (const { part, model } of of('supply')) {
+    const words = part.name ?? model.name
+    byName.set(words, [...(byName.get(words) ?? []), part.ref])
+  }
+  const supplies = [...byName].map(([words, refs]) => `${refRanges(refs)} ${words}`)
   return [
     ...(bays > 0 ? [counted(bays, 'bay')] : []),
     counted(of('drive').length, 'drive'),

@@ -114,22 +114,19 @@ function sectionsOf(look: Look, { content, code }: LidParts, inner: number): Pla
     cautionSection(look, width),
     ...contactSection(look, content, width),
   ]
-  const starts = (width: number) => [startSection(look, content, width), ...feedSection(look, content, width)]
   const [only, ...others] = content.maps
   const tower = only && others.length === 0 && mapWidth(only) < inner * 0.55 ? only : undefined
   const table: Placed = { kind: 'full', make: (width) => driveSection(look, content, width) }
-  const last: Placed[] = [
-    {
-      kind: 'full',
-      make: (width) => [
-        ...findingSections(look, content, width),
-        ...assumedSection(look, content, width),
-        ...addressSection(look, content, width),
-        twinSection(look, content, code, width),
-      ],
-    },
-  ]
   const budgets = (width: number) => budgetSection(look, content, width)
+  const starts = (width: number) => [startSection(look, content, width), ...feedSection(look, content, width)]
+  const last: Placed[] = [
+    { kind: 'full', make: (width) => findingSections(look, content, width) },
+    ...pairs(
+      (width) => [twinSection(look, content, code, width)],
+      (width) => [...assumedSection(look, content, width), ...addressSection(look, content, width)],
+      0.52,
+    ),
+  ]
   if (tower)
     return [
       ...pairs((width) => mapSection(look, tower, width), handling, 0.5),
@@ -140,7 +137,7 @@ function sectionsOf(look: Look, { content, code }: LidParts, inner: number): Pla
   return [
     { kind: 'full', make: (width) => content.maps.flatMap((map) => mapSection(look, map, width)) },
     table,
-    ...pairs(budgets, (width) => [...handling(width), ...starts(width)], 0.63),
+    ...pairs((width) => [...budgets(width), ...starts(width)], handling, 0.64),
     ...last,
   ]
 }

@@ -12,7 +12,7 @@ export function twinSection(look: Look, content: LidContent, code: Code | null, 
     height: height_mm + 1,
     draw: (x, y) => drawTwin(look.inks, content, code, x, y + 0.5, Math.min(width, 96)),
   }
-  return { title: 'Twin label for the fixed body of the case: cut out and stick on', strips: [label], isWhole: true }
+  return { title: 'Twin label for the body of the case (cut out)', strips: [label], isWhole: true }
 }
 
 function drawTwin(inks: Inks, content: LidContent, code: Code | null, x: number, y: number, width: number): PageMark[] {
@@ -36,6 +36,6 @@ function drawTwin(inks: Inks, content: LidContent, code: Code | null, x: number,
           width: room,
         }),
       ),
-    ...(code ? [{ kind: 'code' as const, x: x + width - side - 2.5, y: y + 2.5, size: side, modules: code }] : []),
+    ...(code ? [{ kind: 'code' as const, x: x + width - side - 3, y: y + 2.5, size: side, modules: code }] : []),
   ]
 }
