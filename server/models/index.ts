@@ -7,6 +7,7 @@ import { CatalogRevision } from './CatalogRevision.ts'
 import { Guest } from './Guest.ts'
 import { Invitation } from './Invitation.ts'
 import { Message } from './Message.ts'
+import { ModelPhoto } from './ModelPhoto.ts'
 import { OwnModel } from './OwnModel.ts'
 import { PasswordReset } from './PasswordReset.ts'
 import { RefreshToken } from './RefreshToken.ts'
@@ -27,6 +28,7 @@ const models = [
   Invitation,
   CatalogRevision,
   OwnModel,
+  ModelPhoto,
 ]
 
 /** Binds every model to a database. */
@@ -43,6 +45,7 @@ export {
   Guest,
   Invitation,
   Message,
+  ModelPhoto,
   OwnModel,
   PasswordReset,
   RefreshToken,

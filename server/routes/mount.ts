@@ -5,6 +5,7 @@ import { identify, identifyGuest } from '../middleware/identify.ts'
 import { parse } from '../middleware/parse.ts'
 import { makeRateLimiter, type RateLimiter } from '../middleware/rateLimit.ts'
 import { readBody } from '../middleware/readBody.ts'
+import { readPhotoBody } from '../middleware/readPhoto.ts'
 import { concernsBuild, concernsGuests, may, policies, type Actor, type Verdict } from '../policies/policy.ts'
 import { findRole } from '../services/buildService.ts'
 import type { Context } from '../services/context.ts'
@@ -53,7 +54,7 @@ async function handle(
     guest,
     params,
     query: route.query ? parse(route.query, { ...request.query }) : undefined,
-    body: route.body ? parse(route.body, await readBody(request, response, route.bodyLimit ?? 'small')) : undefined,
+    body: await readAnyBody(route, request, response),
     request,
     response,
   }
@@ -61,6 +62,11 @@ async function handle(
   const answer = await route.controller(call)
   await limiter?.succeeded(call)
   await send(response, answer)
+}
+
+async function readAnyBody(route: AnyRoute, request: Request, response: Response): Promise<unknown> {
+  if (route.takesPhoto) return readPhotoBody(request, response)
+  return route.body ? parse(route.body, await readBody(request, response, route.bodyLimit ?? 'small')) : undefined
 }
 
 /** An address whose ids cannot be ids leads nowhere. */
@@ -94,7 +100,7 @@ async function send(response: Response, answer: Answer): Promise<void> {
   if (answer.headers) response.set(answer.headers)
   if (answer.stream) await answer.stream(response)
   else if (answer.body === undefined) response.end()
-  else if (typeof answer.body === 'string') response.send(answer.body)
+  else if (typeof answer.body === 'string' || Buffer.isBuffer(answer.body)) response.send(answer.body)
   else response.json(answer.body)
 }
 

@@ -32,6 +32,7 @@ function operation(route: AnyRoute) {
       ...(route.params ? { path: route.params } : {}),
       ...(route.query ? { query: route.query } : {}),
     },
+    ...(route.takesPhoto ? { requestBody: { required: true, content: { 'image/*': {} } } } : {}),
     ...(route.body ? { requestBody: { required: true, content: { 'application/json': { schema: route.body } } } } : {}),
     responses: {
       ...Object.fromEntries(Object.entries(route.answers).map(([status, schema]) => [status, answer(schema, route)])),

@@ -21,6 +21,8 @@ export interface Route<
   query?: Query
   body?: Body
   bodyLimit?: BodyLimit
+  /** The body is a picture, not JSON. */
+  takesPhoto?: boolean
   rateLimit?: RateLimitName
   /** Sent by mail programs, from anywhere and without our token: what its path carries is the proof. */
   isOneClick?: boolean

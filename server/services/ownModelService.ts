@@ -5,6 +5,7 @@ import { modelProblems } from '#shared/catalog/modelProblems.ts'
 import type { OwnModel as OwnModelView } from '#shared/contract/catalog.ts'
 import { OwnModel } from '../models/index.ts'
 import type { Context } from './context.ts'
+import { photoVersions } from './modelPhotoService.ts'
 import { Refusal } from './refusal.ts'
 
 /** Models that one person may keep. */
@@ -12,8 +13,11 @@ const most = 1000
 
 /** A person's own library, newest change first. */
 export async function listOwnModels(userId: string): Promise<OwnModelView[]> {
-  const models = await OwnModel.findAll({ where: { userId }, order: [['changedAt', 'DESC']] })
-  return models.map(toView)
+  const [models, photos] = await Promise.all([
+    OwnModel.findAll({ where: { userId }, order: [['changedAt', 'DESC']] }),
+    photoVersions(userId),
+  ])
+  return models.map((own) => toView(own, photos.get(own.modelId)))
 }
 
 /** Adds a model to a person's library, or writes over the one of the same id. */
@@ -23,7 +27,7 @@ export async function putOwnModel(context: Context, userId: string, model: Model
   if ((await OwnModel.count({ where: { userId } })) >= most)
     throw new Refusal('bad-input', { detail: `An own library holds at most ${most} models.` })
   const [saved] = await OwnModel.upsert({ userId, modelId: model.id, model, changedAt: new Date() })
-  return toView(saved)
+  return toView(saved, (await photoVersions(userId)).get(model.id))
 }
 
 /** What a model gets wrong against the connector types and classes of the catalog, by its place in the request. */
@@ -39,8 +43,9 @@ export async function removeOwnModel(userId: string, modelId: string): Promise<v
   if ((await OwnModel.destroy({ where: { userId, modelId } })) === 0) throw new Refusal('not-found')
 }
 
-const toView = (own: OwnModel): OwnModelView => ({
+const toView = (own: OwnModel, photo: string | undefined): OwnModelView => ({
   id: own.modelId,
   model: own.model,
   changedAt: own.changedAt.toISOString(),
+  ...(photo === undefined ? {} : { photo }),
 })

@@ -43,6 +43,7 @@ test('done twice does nothing the second time, and two at once take turns', asyn
   expect(done.flat()).toEqual(migrations.map((migration) => migration.name))
 })
 
-test('are numbered without a gap', () => {
-  expect(migrations.map(({ name }) => Number(name.slice(0, 3)))).toEqual(migrations.map((_, i) => i + 1))
+test('are numbered in rising order, each number once', () => {
+  const numbers = migrations.map(({ name }) => Number(name.slice(0, 3)))
+  expect(numbers).toEqual([...new Set(numbers)].sort((a, b) => a - b))
 })
