@@ -28,6 +28,8 @@ export const sessionSchema = z.object({
   user: userSchema.nullable(),
   /** The guest of a link that this browser is; an account's role in the same build goes before it. */
   guest: guestSessionSchema.nullable().default(null),
+  /** True once, where the browser still carried the cookie of a guest whom the link no longer lets in. */
+  visitEnded: z.boolean().default(false),
   csrfToken: z.string(),
   /** True until the first account exists: the first one becomes administrator. */
   firstAccount: z.boolean(),

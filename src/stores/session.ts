@@ -12,6 +12,8 @@ export const useSessionStore = defineStore('session', () => {
   const user = computed<User | null>(() => session.value?.user ?? null)
   /** Somebody who came by a link, where nobody is signed in. */
   const guest = computed<GuestSession | null>(() => (user.value ? null : (session.value?.guest ?? null)))
+  /** The link by which somebody was a guest here no longer lets them in. */
+  const visitEnded = computed(() => session.value?.visitEnded ?? false)
   const isAdministrator = computed(() => user.value?.role === 'administrator')
   const editsCatalog = computed(() => isAdministrator.value || user.value?.role === 'catalog-editor')
 
@@ -62,6 +64,7 @@ export const useSessionStore = defineStore('session', () => {
 
   /** Asks to sign in over the page, once for all requests refused meanwhile; not again once it was declined. */
   function signInAgain(): Promise<boolean> {
+    if (guest.value) return load().then(() => false)
     if (!user.value || (hasEnded.value && !asksAgain.value)) return Promise.resolve(false)
     return askAgain()
   }
@@ -85,6 +88,7 @@ export const useSessionStore = defineStore('session', () => {
     session,
     user,
     guest,
+    visitEnded,
     isAdministrator,
     editsCatalog,
     hasEnded,

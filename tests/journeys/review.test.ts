@@ -96,6 +96,7 @@ describe('a second pair of eyes', () => {
     await builder.getByRole('button', { name: 'Close out Jo Amsel' }).click()
     await builder.getByText('closed out').first().waitFor()
     browser.expectComplaint(/401/)
+    await guest.getByText('Your visit is over').waitFor()
     await guest.reload()
     await guest.getByRole('heading', { name: 'Sign in' }).waitFor()
   })

@@ -161,7 +161,10 @@ describe('a guest', () => {
     expect(await seen(guest)).toBe(200)
     await owner.delete(`${links}/${link.id}`)
     expect(await seen(guest)).toBe(401)
-    expect(sessionSchema.parse((await guest.get('/api/session')).body).guest).toBeNull()
+    const over = { guest: null, visitEnded: true }
+    expect(sessionSchema.parse((await guest.get('/api/session')).body)).toMatchObject(over)
+    expect(guest.cookies.has('bayloom-guest')).toBe(false)
+    expect(sessionSchema.parse((await guest.get('/api/session')).body).visitEnded).toBe(false)
   })
 
   test('leaves, and the cookie then opens nothing, wherever it was copied to', async () => {

@@ -24,6 +24,8 @@ export const irma: User = { id: 'u1', email: 'irma@reelvault.example', name: 'Ir
 
 export const sessionOf = (user: User | null, csrfToken = 'token-1'): Session => ({
   user,
+  guest: null,
+  visitEnded: false,
   csrfToken,
   firstAccount: false,
   demoAccounts: [],

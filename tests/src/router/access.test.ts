@@ -80,6 +80,7 @@ describe('the routes', () => {
         'rule',
         'rules',
         'sign-in',
+        'unsubscribe',
       ].sort(),
     )
   })
