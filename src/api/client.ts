@@ -23,6 +23,8 @@ export function connectSession(connected: ClientSession): void {
 export type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE'
 export interface RequestOptions {
   body?: unknown
+  /** Sent as it is, with its own type, instead of a JSON body. */
+  file?: Blob
   query?: Readonly<Record<string, string | number | undefined>>
   signal?: AbortSignal
   /** True for requests that themselves sign in or ask who is signed in. */
@@ -77,6 +79,7 @@ async function sendPatiently(method: Method, path: string, options: RequestOptio
 async function send(method: Method, path: string, options: RequestOptions): Promise<Response> {
   const headers: Record<string, string> = { accept: 'application/json' }
   if (options.body !== undefined) headers['content-type'] = 'application/json'
+  if (options.file) headers['content-type'] = options.file.type
   if (method !== 'GET' && session) headers['x-csrf-token'] = session.csrfToken()
   let response: Response
   try {
@@ -84,7 +87,7 @@ async function send(method: Method, path: string, options: RequestOptions): Prom
       method,
       headers,
       credentials: 'same-origin',
-      body: options.body === undefined ? undefined : JSON.stringify(options.body),
+      body: options.file ?? (options.body === undefined ? undefined : JSON.stringify(options.body)),
       signal: options.signal,
       keepalive: options.keepalive,
     })

@@ -1,7 +1,7 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/vue-query'
 import { computed } from 'vue'
 import type { OwnModel } from '#shared/contract/catalog.ts'
-import { deleteOwnModel, listOwnModels, putOwnModel } from '../api/ownModels.ts'
+import { deleteModelPhoto, deleteOwnModel, listOwnModels, putModelPhoto, putOwnModel } from '../api/ownModels.ts'
 import { useSessionStore } from '../stores/session.ts'
 
 export const ownModelsKey = ['own-models'] as const
@@ -19,5 +19,7 @@ export function useOwnModels() {
   const refresh = () => client.invalidateQueries({ queryKey: ownModelsKey })
   const save = useMutation({ mutationFn: putOwnModel, onSuccess: refresh })
   const remove = useMutation({ mutationFn: deleteOwnModel, onSuccess: refresh })
-  return { ...query, models, save, remove }
+  const keepPhoto = useMutation({ mutationFn: putModelPhoto, onSuccess: refresh })
+  const dropPhoto = useMutation({ mutationFn: deleteModelPhoto, onSuccess: refresh })
+  return { ...query, models, save, remove, keepPhoto, dropPhoto }
 }
