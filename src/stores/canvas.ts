@@ -22,5 +22,7 @@ export const useCanvasStore = defineStore('canvas', () => {
   const dialog = ref<'connect' | 'outlets' | 'keys' | 'duplicate' | 'settings' | null>(null)
   /** Number whose making is asked for. */
   const explaining = shallowRef<{ target: ExplainTarget; moment: MomentId } | null>(null)
-  return { explaining, rail, acts, current, dialog }
+  /** Drive whose replacement is under way. */
+  const replacing = shallowRef<string | null>(null)
+  return { explaining, replacing, rail, acts, current, dialog }
 })

@@ -21,13 +21,31 @@ const faces = [
   { id: 'joints', label: 'Joints', component: defineAsyncComponent(() => import('./JointsTable.vue')) },
   { id: 'findings', label: 'Findings' },
   { id: 'bays', label: 'Bays', component: defineAsyncComponent(() => import('../drives/BayList.vue')) },
+  {
+    id: 'comments',
+    label: 'Comments',
+    isForPhone: true,
+    component: defineAsyncComponent(() => import('../comments/CommentsFace.vue')),
+  },
   { id: 'history', label: 'History', component: defineAsyncComponent(() => import('../history/BuildHistory.vue')) },
   { id: 'review', label: 'Review', component: defineAsyncComponent(() => import('../review/ReviewFace.vue')) },
+  {
+    id: 'lid',
+    label: 'Lid sheet',
+    menu: 'Papers',
+    component: defineAsyncComponent(() => import('../lid/LidFace.vue')),
+  },
   {
     id: 'labels',
     label: 'Labels',
     menu: 'Papers',
     component: defineAsyncComponent(() => import('../labels/LabelsFace.vue')),
+  },
+  {
+    id: 'parts',
+    label: 'Parts list',
+    menu: 'Papers',
+    component: defineAsyncComponent(() => import('../parts/PartsFace.vue')),
   },
 ] as const satisfies readonly Face[]
 
@@ -35,7 +53,7 @@ export type Show = (typeof faces)[number]['id']
 export type ShownFace = Face & { id: Show }
 
 /** On a phone the lists come first: the sheet is there to look at. */
-const firstOnPhone: readonly Show[] = ['findings', 'joints', 'bays', 'review', 'ledger', 'wiring']
+const firstOnPhone: readonly Show[] = ['findings', 'joints', 'bays', 'comments', 'review', 'ledger', 'wiring']
 
 /** The faces in their order, for a wide window or for a phone. */
 export function showsOf(isNarrow: boolean): readonly ShownFace[] {
