@@ -8,8 +8,10 @@ import { titleOf } from '../diagram/face.ts'
 import { neighbourOf, type Direction } from '../diagram/neighbours.ts'
 import { useCanvasStore } from '../stores/canvas.ts'
 import { useChecksStore } from '../stores/checks.ts'
+import { useCommentsStore } from '../stores/comments.ts'
 import { useDiagramStore } from '../stores/diagram.ts'
 import { useSelectionStore } from '../stores/selection.ts'
+import { useCommentTarget } from './useCommentTarget.ts'
 
 const arrows: Readonly<Record<string, Direction>> = {
   ArrowLeft: 'left',
@@ -30,6 +32,8 @@ export function useCanvasKeys(cancel: () => void) {
   const selection = useSelectionStore()
   const canvas = useCanvasStore()
   const checks = useChecksStore()
+  const comments = useCommentsStore()
+  const { target } = useCommentTarget()
   let nudge = 0
 
   function onKeydown(event: KeyboardEvent): void {
@@ -88,6 +92,8 @@ export function useCanvasKeys(cancel: () => void) {
         return true
       case 'm':
         return nextMoment()
+      case 'n':
+        return comment()
       default:
         return false
     }
@@ -160,6 +166,12 @@ export function useCanvasKeys(cancel: () => void) {
   function duplicate(): boolean {
     if (!diagram.build || selection.parts.size === 0) return true
     diagram.commit(duplicateParts(diagram.build, diagram.makeId, selection.parts))
+    return true
+  }
+
+  function comment(): boolean {
+    const { pin, about } = target.value
+    comments.commentOn(pin, about)
     return true
   }
 

@@ -1,6 +1,7 @@
 import type { LedgerRow, MomentId } from '#shared/check/result.ts'
 
-const identity = (row: LedgerRow): string =>
+/** What a row is known by, whatever its moment and figures. */
+export const ledgerKey = (row: LedgerRow): string =>
   [
     row.kind,
     row.subject.part,
@@ -10,7 +11,9 @@ const identity = (row: LedgerRow): string =>
     row.subject.rail,
     row.rail,
     row.name,
-  ].join('|')
+  ]
+    .join('|')
+    .slice(0, 400)
 
 /** How near a row is to its limit; a voltage counts by how little is left above the lowest allowed. */
 export function strainOfRow(row: LedgerRow): number {
@@ -23,7 +26,7 @@ export function worstRows(rows: readonly LedgerRow[], moment: MomentId | null): 
   const best = new Map<string, LedgerRow>()
   for (const row of rows) {
     if (moment !== null && row.moment !== moment) continue
-    const key = identity(row)
+    const key = ledgerKey(row)
     const known = best.get(key)
     if (!known || strainOfRow(row) > strainOfRow(known)) best.set(key, row)
   }
