@@ -40,6 +40,8 @@ export async function enqueue<Name extends QueueName>(
 
 /** How the jobs of a queue are done. */
 export interface Worker<Data> {
+  /** Errors may hold addresses of people: they are logged by their code alone. */
+  isDiscreet?: boolean
   /** Does the job; answers why it must be tried again, or nothing once it is done. */
   work(data: Data, transaction: Transaction): Promise<Error | null>
   /** Notes that it was not done, and when it is tried next; null: it is given up. */
@@ -67,7 +69,8 @@ export function workOff<Name extends QueueName>(
         await boss.deleteJob(name, job.id, { db })
         return true
       }
-      log.warn({ err: error, queue: name, job: job.id, tries: job.retryCount + 1 }, 'a job was not done')
+      const told = worker.isDiscreet ? { code: codeOf(error) } : { err: error }
+      log.warn({ ...told, queue: name, job: job.id, tries: job.retryCount + 1 }, 'a job was not done')
       await boss.fail(name, job.id, { message: error.message }, { db })
       const later = await boss.getJobById(name, job.id, { db } as PgBoss.ConnectionOptions & {
         includeArchive: boolean
@@ -78,6 +81,8 @@ export function workOff<Name extends QueueName>(
       return true
     })
 }
+
+const codeOf = (error: Error): unknown => ('code' in error ? error.code : error.name)
 
 /** What a job that broke off has written is undone; the job itself is not. */
 async function attempt<Data>(

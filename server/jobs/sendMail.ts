@@ -15,6 +15,7 @@ export function sendMail(
   publicUrl: () => string,
 ): Worker<QueueData['mail']> {
   return {
+    isDiscreet: true,
     async work({ messageId }, transaction) {
       const message = await Message.findByPk(messageId, { transaction, lock: transaction.LOCK.UPDATE })
       if (message?.state !== 'queued') return null

@@ -10,16 +10,18 @@ import { queueMail } from '../../server/services/mailboxService.ts'
 import { startApi, type Api } from './support/api.ts'
 
 let api: Api
+const logged: string[] = []
+const log = pino({ level: 'trace' }, { write: (line: string) => void logged.push(line) })
 beforeAll(async () => {
   api = await startApi()
 })
 afterAll(() => api.close())
 beforeEach(async () => {
+  logged.length = 0
   await Message.destroy({ where: {} })
   await api.context.database.query('DELETE FROM pgboss.job')
 })
 
-const log = pino({ level: 'silent' })
 const queue = (to: string) =>
   api.context.database.transaction((transaction) =>
     queueMail(api.context, { to, kind: 'other', mail: { subject: 'S', text: 'T', html: '<p>T</p>' } }, transaction),
@@ -82,7 +84,9 @@ test('a process cut off from the database while it sends leaves the mail to the 
 
 test('a mail that is not taken over waits longer each time, is given up at last, and can be tried again', async () => {
   await queue('bounce@example.org')
-  const job = jobOf(() => Promise.reject(new Error('mailbox full')))
+  const job = jobOf(() =>
+    Promise.reject(Object.assign(new Error('mailbox full'), { rejected: ['bounce@example.org'] })),
+  )
   const waits_ms: number[] = []
   for (let i = 0; i < 8; i++) {
     await hurry()
@@ -99,6 +103,8 @@ test('a mail that is not taken over waits longer each time, is given up at last,
   }
   await hurry()
   expect(await job()).toBe(false)
+  expect(logged.filter((line) => line.includes('a job was not done'))).toHaveLength(8)
+  expect(logged.join('')).not.toMatch(/bounce@example\.org|mailbox full/)
 
   const administrator = await api.person({ role: 'administrator' })
   const [shown] = (await administrator.get('/api/mailbox?state=failed')).body as { id: string; lastError: string }[]
