@@ -14,8 +14,8 @@ export const approvedHash = (document: BuildDocument): string =>
 
 /**
  * Takes away approvals that a new revision no longer deserves: an approval covers one state of the plan, so any change but
- * moving things on the sheet ends it. It stays lapsed, also where the change is taken back: ask again. Called in the
- * transaction of every new revision, and where an approval comes after the diagram moved on.
+ * moving things on the sheet or noting what was bought ends it. It stays lapsed, also where the change is taken back: ask
+ * again. Called in the transaction of every new revision, and where an approval comes after the diagram moved on.
  */
 export async function lapseApprovals(
   context: Context,

@@ -54,7 +54,7 @@ export function standingWords(round: Round): string {
       return state === 'open' ? `Waiting for verdicts: ${count} so far.` : `Closed with ${count}: nothing is approved.`
     case 'changes asked':
       return state === 'open'
-        ? 'Changes are asked for. Make them, then ask for the next round.'
+        ? 'Changes are asked for. The next round will show what became of them.'
         : 'Ended with changes asked for.'
     case 'held back':
       return stops === null

@@ -230,12 +230,13 @@ describe('an approval', () => {
     expect(listed.items.find(({ id }) => id === buildId)?.review).toMatchObject({ approval, open: null })
 
     await change(editor, 1, { op: 'updatePart', id: 'p1', patch: { position: { x: 40, y: 80 } } })
+    await change(editor, 2, { op: 'setPurchase', line: 'test-data-cable', purchase: { owned: 1 } })
     expect((await review()).approval?.lapsedRevision).toBeNull()
-    await change(editor, 2, note('p1', 'another lead'))
-    expect((await review()).approval).toMatchObject({ revision: 1, lapsedRevision: 3 })
-    await change(editor, 3, note('p1', 'a third lead'))
-    await change(editor, 4, note('p1', 'cable 1'))
-    expect((await review()).approval?.lapsedRevision).toBe(3)
+    await change(editor, 3, note('p1', 'another lead'))
+    expect((await review()).approval).toMatchObject({ revision: 1, lapsedRevision: 4 })
+    await change(editor, 4, note('p1', 'a third lead'))
+    await change(editor, 5, note('p1', 'cable 1'))
+    expect((await review()).approval?.lapsedRevision).toBe(4)
     expect((await list()).rounds[0]?.standing).toBe('lapsed')
     expect(await happened('approval-lapsed')).toEqual([
       { kind: 'approval-lapsed', roundId: round.id, round: 1, revision: 1 },
