@@ -1,4 +1,5 @@
 import type { z } from 'zod'
+import type { TransferRequest } from '#shared/contract/account.ts'
 import {
   acceptedInvitationSchema,
   invitationSchema,
@@ -30,6 +31,10 @@ export const changeMember = (buildId: string, userId: string, role: BuildRole): 
 
 export const removeMember = (buildId: string, userId: string): Promise<void> =>
   requestNothing('DELETE', path(buildId, `members/${step(userId)}`))
+
+/** Hands the build over to another member. */
+export const transferOwnership = (buildId: string, wanted: TransferRequest): Promise<void> =>
+  requestNothing('POST', path(buildId, 'ownership'), { body: wanted })
 
 export const readInvitation = (token: string): Promise<InvitationView> =>
   request(invitationViewSchema, 'GET', `/api/invitations/${step(token)}`, { anonymous: true })

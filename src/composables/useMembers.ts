@@ -1,4 +1,5 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/vue-query'
+import type { TransferRequest } from '#shared/contract/account.ts'
 import type { BuildRole } from '#shared/contract/build.ts'
 import * as api from '../api/members.ts'
 import { buildsKey } from './useBuilds.ts'
@@ -25,6 +26,10 @@ export function useMembers(buildId: string) {
     change: useMutation({
       mutationFn: (wanted: { userId: string; role: BuildRole }) =>
         api.changeMember(buildId, wanted.userId, wanted.role),
+      onSuccess,
+    }),
+    transfer: useMutation({
+      mutationFn: (wanted: TransferRequest) => api.transferOwnership(buildId, wanted),
       onSuccess,
     }),
     remove: useMutation({ mutationFn: (userId: string) => api.removeMember(buildId, userId), onSuccess }),

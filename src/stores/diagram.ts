@@ -4,6 +4,7 @@ import { changesBetween } from '#shared/build/changesBetween.ts'
 import type { Edit } from '#shared/build/changes.ts'
 import type { BuildDocument } from '#shared/build/document.ts'
 import type { EditOutcome } from '#shared/build/edits/outcome.ts'
+import { invert } from '#shared/build/invert.ts'
 import { resolve } from '#shared/build/resolve.ts'
 import type { CatalogIndex } from '#shared/catalog/catalog.ts'
 import { arrange } from '#shared/layout/arrange.ts'
@@ -107,7 +108,9 @@ export const useDiagramStore = defineStore('diagram', () => {
   function remember(label: string, before: BuildDocument): void {
     if (!document.value) return
     const changes = changesBetween(document.value, before)
-    if (changes.length > 0) history.value = { back: [...history.value.back, { label, changes }], forth: [] }
+    if (changes.length === 0) return
+    const step = { label, changes, opposite: invert(document.value, changes) }
+    history.value = { back: [...history.value.back, step], forth: [] }
   }
 
   function onEdit(listener: Listener): () => void {
