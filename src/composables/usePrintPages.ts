@@ -1,3 +1,4 @@
+import { useEventListener } from '@vueuse/core'
 import type { PaperDocument } from '#shared/paper/page.ts'
 import { pageSvg } from '#shared/paper/pageSvg.ts'
 
@@ -5,7 +6,24 @@ import { pageSvg } from '#shared/paper/pageSvg.ts'
  * Prints pages as they are: their own size, no margins, nothing scaled. They stand in the document only while the print
  * window is open, and everything else is left out of it. Gives the way to take them out again.
  */
-export function printPages({ pages, title }: PaperDocument): () => void {
+export function printPages(paper: PaperDocument): () => void {
+  const clear = putPages(paper)
+  window.addEventListener('afterprint', clear, { once: true })
+  window.print()
+  return clear
+}
+
+/** As `printPages`, where the browser's own command to print is given while `paper` has pages to show. */
+export function usePrintCommand(paper: () => PaperDocument | null): void {
+  let clear: (() => void) | undefined
+  useEventListener(window, 'beforeprint', () => {
+    const printed = paper()
+    if (printed && !document.querySelector('.print-pages')) clear = putPages(printed)
+  })
+  useEventListener(window, 'afterprint', () => clear?.())
+}
+
+function putPages({ pages, title }: PaperDocument): () => void {
   const [first] = pages
   if (!first) return () => undefined
   const frame = document.createElement('div')
@@ -23,8 +41,6 @@ export function printPages({ pages, title }: PaperDocument): () => void {
   }
   document.title = title
   document.body.append(frame)
-  window.addEventListener('afterprint', clear, { once: true })
-  window.print()
   return clear
 }
 

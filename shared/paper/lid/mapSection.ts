@@ -46,10 +46,10 @@ function rowStrips(look: Look, bays: readonly LidBay[], from: number, pitch: num
   })
 }
 
-/** Wide cells need two lines, narrow ones say everything below each other. */
+/** Wide cells need a line or two, narrow ones say everything below each other. */
 function cellHeight(look: Look, width: number): number {
   const scale = look.density.bay_pt / 11
   if (width >= 52) return 8.6 * scale
   if (width >= 27) return 11.5 * scale
-  return width >= 16 ? 15 * scale : 16.5
+  return 16.5
 }
