@@ -141,7 +141,15 @@ export function useAutosave(buildId: string) {
   }
 
   function lookForNewer(): void {
-    if (state.value && newest.revision > state.value.revision) void saver?.refresh()
+    if (state.value && newest.revision > state.value.revision) takeIn()
+  }
+
+  /**
+   * Others' work comes in. Where there is work of one's own, that goes to the server first: there it is merged with theirs
+   * or found to clash. Put on top here, it would pass over theirs without a word.
+   */
+  function takeIn(): void {
+    void (saver && saver.unsaved() > 0 ? saver.flush() : saver?.refresh())
   }
 
   function showState(next: SaveState): void {
@@ -195,7 +203,7 @@ export function useAutosave(buildId: string) {
   }
 
   const stopEdits = diagram.onEdit((edit) => saver?.add(edit))
-  channel.onmessage = () => void saver?.refresh()
+  channel.onmessage = takeIn
   useEventListener(window, 'online', () => void saver?.flush())
   useEventListener(document, 'visibilitychange', () => {
     if (document.visibilityState === 'hidden') void saver?.flush()

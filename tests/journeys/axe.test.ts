@@ -14,6 +14,7 @@ const guestPages: readonly [path: string, heading: string | RegExp][] = [
 const pages: readonly [path: string, heading: string | RegExp][] = [
   ['/builds', 'Builds'],
   ['/account', 'Account'],
+  ['/notifications', 'Notifications'],
   ['/catalog', 'Catalog'],
   ['/catalog/models/supply-atx-650', /650/],
   ['/catalog/connectors/sata-power-receptacle', /SATA power receptacle/],

@@ -115,12 +115,20 @@ describe('no edit is lost', () => {
     browser.expectComplaint(/409/)
     const { context, build, post, onServer } = await begin()
     const page = await open(context, build.id)
+    // Others' saves come in at once: only one that crosses one's own on its way is a clash.
+    let release = () => {}
+    const held = new Promise<void>((resolve) => (release = resolve))
+    await context.route(saves, async (route) => {
+      await held
+      await route.continue()
+    })
+    await rename(page, 'My name')
     await post(`/api/builds/${build.id}/revisions`, {
       base: build.revision,
       requestId: crypto.randomUUID(),
       edits: [{ label: 'Rename', changes: [{ op: 'rename', name: 'Their name' }] }],
     })
-    await rename(page, 'My name')
+    release()
     const dialog = page.getByRole('dialog', { name: 'Somebody else changed the same parts' })
     await dialog.getByText('Their name').waitFor()
     await dialog.getByText('My name').waitFor()

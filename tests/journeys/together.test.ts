@@ -62,6 +62,17 @@ describe('two people in one build', () => {
     await irma.page.getByRole('button', { name: 'Teo Marchetti has chosen W3' }).waitFor()
     await irma.page.locator('.tag', { hasText: 'W3' }).getByTitle('Chosen by Teo Marchetti').waitFor()
 
+    // A comment stands at the other's screen at once.
+    await irma.page.getByRole('tab', { name: 'Comments' }).click()
+    const comment = {
+      requestId: crypto.randomUUID(),
+      pin: { kind: 'build' },
+      about: 'the build',
+      text: 'Two leads are thin here.',
+    }
+    expect(await post(teo.context, `/api/builds/${buildId}/threads`, comment)).toBe(201)
+    await irma.page.getByText('Two leads are thin here.').first().waitFor()
+
     // What one does apart is in at the other's at once, without a reload.
     await rename(teo.page, 'Name', 'North room, as Teo found it')
     await irma.page.getByRole('heading', { name: 'North room, as Teo found it', level: 1 }).waitFor()
@@ -117,5 +128,17 @@ describe('two people in one build', () => {
       .click()
     await page.waitForURL(/show=review&round=/)
     await page.getByRole('button', { name: 'Notifications', exact: true }).waitFor()
+
+    const mention = {
+      requestId: crypto.randomUUID(),
+      pin: { kind: 'build' },
+      about: 'the build',
+      text: `Look at the far end, @{${asked?.user.id}}.`,
+    }
+    expect(await post(irma, `/api/builds/${buildId}/threads`, mention)).toBe(201)
+    await page.getByRole('button', { name: 'Notifications, 1 not read' }).click()
+    await page.getByRole('link', { name: /Irma Solberg mentioned you/ }).click()
+    await page.waitForURL(/thread=/)
+    await page.getByRole('main').getByText('Look at the far end').first().waitFor()
   })
 })
