@@ -19,20 +19,17 @@ export interface LabelWishes {
   edges: boolean
 }
 
+/** Everything, on a fresh sheet. */
+export const makeWishes = (): LabelWishes =>
+  reactive({ groups: [...labelGroups], freeEnds: true, since: null, start: 0, edges: false })
+
 /** The labels of the open build, chosen and laid on their sheets. `before` is the document of the revision to compare with. */
 export function useLabelPrint(
   { settings, sheet }: ReturnType<typeof useLabelSheets>,
+  wishes: LabelWishes,
   before: MaybeRefOrGetter<BuildDocument | null>,
 ) {
   const diagram = useDiagramStore()
-  const wishes = reactive<LabelWishes>({
-    groups: [...labelGroups],
-    freeEnds: true,
-    since: null,
-    start: 0,
-    edges: false,
-  })
-
   const labels = computed(() => (diagram.build ? labelsOf(diagram.build) : []))
   const old = computed(() => {
     const document = toValue(before)
@@ -67,5 +64,5 @@ export function useLabelPrint(
     return printLabels(chosen.value.print, options, title)
   })
 
-  return { wishes, labels, chosen, counts, start, print }
+  return { labels, chosen, counts, start, print }
 }
