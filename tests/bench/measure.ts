@@ -6,6 +6,14 @@ export interface Row {
   beside: string
 }
 
+/** A line whose figure is no time. */
+export interface Figure {
+  what: string
+  own: number
+  unit: 'kB' | '/s'
+  beside: string
+}
+
 /** Calls until the code is warm: for this long, or so many times. */
 const warmUp = { ms: 1500, calls: 1000 }
 
@@ -22,8 +30,10 @@ export function median_ms(call: () => unknown, runs = 101): number {
 }
 
 /** Prints rows as one table. */
-export function printTable(rows: readonly Row[]): void {
+export function printTable(rows: readonly (Row | Figure)[]): void {
   const width = Math.max(...rows.map(({ what }) => what.length))
-  for (const { what, own_ms, beside } of rows)
-    console.log(`${what.padEnd(width)}  ${own_ms.toFixed(own_ms < 10 ? 3 : 1).padStart(9)} ms  ${beside}`)
+  for (const row of rows) {
+    const [own, unit] = 'own_ms' in row ? [row.own_ms, 'ms'] : [row.own, row.unit]
+    console.log(`${row.what.padEnd(width)}  ${own.toFixed(own < 10 ? 3 : 1).padStart(9)} ${unit}  ${row.beside}`)
+  }
 }
