@@ -78,7 +78,7 @@ export function useBuildEvents(buildId: string, handlers: BuildEventHandlers = {
     await putPresence(buildId, ownTab, chosen).catch(() => {})
   }, 250)
 
-  presence.ownId = session.user?.id ?? null
+  presence.ownId = session.user?.id ?? session.guest?.id ?? null
   notices.isCarried = true
   const close = openEventStream((after) => buildEventsPath(buildId, ownTab, after), {
     hello: hearHello,
