@@ -50,6 +50,16 @@ describe('at the wall', () => {
     expect(ups_VA(power)).toBeCloseTo(250 / 0.92 / 0.95, 9)
   })
 
+  it.each([0, 7])('takes a power factor of %s for not stated: the worst stands, and nothing is endless', (factor) => {
+    const odd = model('odd', { ...gold, supply: { ...gold.supply!, powerFactor: figure(factor) } })
+    const { power } = powerOf(
+      powerDocument({ T1: 'odd', E1: 'load' }, ['T1.s1 E1.power'], {
+        models: [{ ...odd, id: 'odd' }, steadyLoad('load', { '12V': 250 / 12 })],
+      }),
+    )
+    expect(ups_VA(power)).toBeCloseTo(250 / 0.92 / 0.9, 9)
+  })
+
   it('says nothing where a loaded supply states no efficiency', () => {
     const bare = model('bare', { ...gold, supply: { ...gold.supply!, efficiency: [] } })
     const { power } = powerOf(
