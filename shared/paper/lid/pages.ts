@@ -1,3 +1,4 @@
+import { extentOf } from '../extent.ts'
 import type { Page, PageMark, PaperDocument } from '../page.ts'
 import { budgetSection } from './budgetSection.ts'
 import type { LidContent, PaperName } from './content.ts'
@@ -55,8 +56,7 @@ export function lidPages(parts: LidParts, options: LidOptions): PaperDocument {
     const look: Look = { density, inks }
     return flow(look, frames, sectionsOf(look, parts, inner))
   })
-  const fewest = Math.min(...set.map(({ length }) => length))
-  const sheets = set.find(({ length }) => length === fewest) ?? []
+  const sheets = bestSet(set, bottom)
   sheets[0]?.unshift(...head.marks)
 
   const look: Look = { density: densities[1]!, inks }
@@ -80,6 +80,20 @@ export function lidPages(parts: LidParts, options: LidOptions): PaperDocument {
     return { width_mm, height_mm, title, marks: [...top, ...marks, ...below] }
   })
   return { title: titleOf(content), language: 'en', pages }
+}
+
+/** Share of the first page above which nothing is gained by setting it closer. */
+const full = 0.85
+
+/** The roomiest of those that take the fewest pages and do not leave the first one half empty. */
+function bestSet(set: readonly PageMark[][][], bottom: number): PageMark[][] {
+  const fewest = Math.min(...set.map(({ length }) => length))
+  const short = set
+    .filter(({ length }) => length === fewest)
+    .map((pages) => ({ pages, fill: Math.max(0, ...(pages[0] ?? []).map((mark) => extentOf(mark).bottom)) / bottom }))
+  const fullest = Math.max(...short.map(({ fill }) => fill))
+  const isEnough = fewest === 1 ? 0 : Math.min(full, fullest)
+  return short.find(({ fill }) => fill >= isEnough)?.pages ?? []
 }
 
 const titleOf = ({ name, machine, revision }: LidContent): string =>
