@@ -49,7 +49,7 @@ const browsers: readonly [RegExp, string][] = [
   [/\bEdg(e|A|iOS)?\//, 'Edge'],
   [/\bOPR\//, 'Opera'],
   [/\bFirefox\/|\bFxiOS\//, 'Firefox'],
-  [/\bChrome\/|\bCriOS\/|\bChromium\//, 'Chrome or Chromium'],
+  [/Chrome\/|\bCriOS\/|\bChromium\//, 'Chrome or Chromium'],
   [/\bSafari\//, 'Safari'],
 ]
 const systems: readonly [RegExp, string][] = [
