@@ -3,6 +3,7 @@ import { canvasRows } from './canvas.ts'
 import { fullCheckRows } from './fullCheck.ts'
 import { printTable } from './measure.ts'
 import { networkSolveRows } from './networkSolve.ts'
+import { paperRows } from './papers.ts'
 import { revisionRows } from './revisions.ts'
 import { scriptSizeRows } from './scriptSizes.ts'
 
@@ -12,6 +13,7 @@ printTable([
   ...fullCheckRows(),
   ...(await apiRows()),
   ...(await revisionRows()),
+  ...(await paperRows()),
   ...(await scriptSizeRows()),
   ...(await canvasRows()),
 ])
