@@ -43,7 +43,7 @@ export function makeContext(
   const jobs = makeJobLoop(allJobs(shared, transport), log)
   const context: OwnedContext = Object.assign(shared, {
     jobs,
-    live: makeLive(config, database, log, () => jobs.wake()),
+    live: makeLive(config, database, log, () => jobs.wake('tell news')),
     async loadSecrets() {
       shared.secrets = await loadSecrets(database, config.secret)
     },

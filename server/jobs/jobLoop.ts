@@ -6,8 +6,8 @@ export type Job = () => Promise<boolean>
 /** Works off what lies waiting in the database, piece by piece: at once when woken, else every few seconds. */
 export interface JobLoop {
   start(): void
-  /** Says that work was queued. */
-  wake(): void
+  /** Says that work was queued: for the jobs named, else for any. */
+  wake(...names: string[]): void
   /** Does everything that waits now, and what comes of it. */
   drain(): Promise<void>
   /** Finishes what is at hand and stops. */
@@ -18,11 +18,17 @@ const pause_ms = 5_000
 
 /**
  * Makes the loop. Jobs run beside each other, so that a slow mail server holds up nothing but mail. A job that fails is
- * logged and tried again in the next round; the others go on.
+ * logged and tried again in the next round; the others go on. After a job that did something all look again: one may have
+ * left work for another.
  */
 export function makeJobLoop(jobs: Readonly<Record<string, Job>>, log: Logger): JobLoop {
-  const runners = Object.entries(jobs).map(([name, job]) => makeRunner(name, job, log))
   let timer: NodeJS.Timeout | undefined
+  const runners = Object.entries(jobs).map(([name, job]) => makeRunner(name, job, wake, log))
+
+  function wake(...names: string[]): void {
+    if (!timer) return
+    for (const runner of runners) if (names.length === 0 || names.includes(runner.name)) void runner.run()
+  }
 
   const run = () => Promise.all(runners.map((runner) => runner.run()))
 
@@ -32,9 +38,7 @@ export function makeJobLoop(jobs: Readonly<Record<string, Job>>, log: Logger): J
       timer.unref()
       void run()
     },
-    wake() {
-      if (timer) void run()
-    },
+    wake,
     async drain() {
       while ((await run()).some(Boolean));
     },
@@ -46,7 +50,7 @@ export function makeJobLoop(jobs: Readonly<Record<string, Job>>, log: Logger): J
   }
 }
 
-function makeRunner(name: string, job: Job, log: Logger) {
+function makeRunner(name: string, job: Job, onWorked: () => void, log: Logger) {
   let running: Promise<boolean> | undefined
   let again = false
 
@@ -63,13 +67,23 @@ function makeRunner(name: string, job: Job, log: Logger) {
     return worked
   }
 
-  return {
+  async function workAndTell(): Promise<boolean> {
+    const worked = await work()
+    running = undefined
+    if (again) void runner.run()
+    if (worked) onWorked()
+    return worked
+  }
+
+  const runner = {
+    name,
     /** Does what waits; true where that was anything. Asked meanwhile, it looks once more. */
     run(): Promise<boolean> {
       again = true
-      running ??= work().finally(() => (running = undefined))
+      running ??= workAndTell()
       return running
     },
     rest: async () => void (await running),
   }
+  return runner
 }

@@ -101,7 +101,7 @@ export async function saveEdits(
     await lapseApprovals(context, { buildId, revision, document, cause: { userId: authorId } }, transaction)
     return { revision, savedAt: savedAt.toISOString(), merged: [...standing.since] }
   })
-  context.jobs.wake()
+  context.jobs.wake('check builds')
   return answer
 }
 

@@ -43,3 +43,37 @@ test('does what is queued while it works, and finishes the piece at hand before 
   await loop.stop()
   expect(seen).toEqual(['first', 'second'])
 })
+
+test('does at once what one job leaves for another, and wakes only whom it is told to', async () => {
+  const tasks = ['first']
+  const letters: string[] = []
+  const sent: string[] = []
+  let looks = 0
+  const loop = makeJobLoop(
+    {
+      tell: () => {
+        const task = tasks.shift()
+        if (task !== undefined) letters.push(task)
+        return Promise.resolve(task !== undefined)
+      },
+      send: () => {
+        const letter = letters.shift()
+        if (letter !== undefined) sent.push(letter)
+        return Promise.resolve(letter !== undefined)
+      },
+      look: () => Promise.resolve(looks++ < 0),
+    },
+    log,
+  )
+  loop.start()
+  await expect.poll(() => sent).toEqual(['first'])
+  await loop.stop()
+  const before = looks
+  loop.start()
+  await expect.poll(() => looks).toBe(before + 1)
+  loop.wake('send')
+  tasks.push('second')
+  loop.wake('tell')
+  await expect.poll(() => sent).toEqual(['first', 'second'])
+  await loop.stop()
+})
