@@ -11,6 +11,8 @@ export const partPatchSchema = z.strictObject({
   position: partSchema.shape.position.nullable(),
   bay: partSchema.shape.bay.nullable(),
   serial: partSchema.shape.serial.nullable(),
+  wwn: partSchema.shape.wwn.nullable(),
+  makerModel: partSchema.shape.makerModel.nullable(),
   role: partSchema.shape.role.nullable(),
   mode: partSchema.shape.mode.nullable(),
   routes_mm: partSchema.shape.routes_mm.nullable(),

@@ -6,7 +6,7 @@ import type { AcceptedFinding, BuildDocument, Part, Purchase } from './document.
 import { same } from './same.ts'
 
 /** Fields of a part that are told with their value before and after. */
-export const toldFields = ['ref', 'model', 'name', 'serial', 'role', 'mode', 'note'] as const
+export const toldFields = ['ref', 'model', 'name', 'serial', 'wwn', 'makerModel', 'role', 'mode', 'note'] as const
 export type ToldField = (typeof toldFields)[number]
 
 /** A bay by the designation of its case. */

@@ -8,6 +8,8 @@ const fieldNames: Readonly<Record<ToldField, string>> = {
   model: 'model',
   name: 'name',
   serial: 'serial',
+  wwn: 'WWN',
+  makerModel: 'maker’s model',
   role: 'role',
   mode: 'mode',
   note: 'note',

@@ -60,6 +60,13 @@ export const partSchema = z.strictObject({
   /** Drives: the bay that holds it. Backplanes: the first bay that it serves. */
   bay: z.strictObject({ case: localIdSchema, slot: z.int().min(1).max(400) }).optional(),
   serial: z.string().max(80).optional(),
+  /** World wide name of a drive, as the operating system shows it without "0x". */
+  wwn: z
+    .string()
+    .regex(/^[0-9a-f]{16,32}$/, 'use 16 to 32 hex digits in lower case, without "0x"')
+    .optional(),
+  /** What its maker calls it, as printed on the label or told by the drive. */
+  makerModel: z.string().min(1).max(80).optional(),
   role: z.enum(roles).optional(),
   /** Controllers that can do both: how this one is set. */
   mode: z.enum(['pass-through', 'combined']).optional(),

@@ -7,7 +7,7 @@ import type { CheckResult } from './result.ts'
 /** Fields of a part by what an edit of them touches. Any other field makes the whole check anew. */
 const fieldsByReach = {
   /** Nothing that the checker says. */
-  none: ['position', 'note'],
+  none: ['position', 'note', 'wwn', 'makerModel'],
   /** Rules and words, but neither currents nor lanes. */
   rules: ['serial', 'bay', 'mode', 'routes_mm', 'pinTest'],
 } as const

@@ -1,6 +1,9 @@
 /** A JSON value in a text that holds several, one after the other, with the line on which it begins. */
 export type FoundValue = { line: number; value: unknown } | { line: number; trouble: string }
 
+/** Values that never end are given up on after so many: each costs a look through the rest of the text. */
+const mostUnended = 20
+
 /**
  * Splits a text of JSON values that follow each other with nothing or anything between them, as pasted outputs of several
  * runs do (prompts and messages between them are passed over). What begins like a value and cannot be read is told
@@ -8,8 +11,11 @@ export type FoundValue = { line: number; value: unknown } | { line: number; trou
  */
 export function jsonValues(text: string): FoundValue[] {
   const found: FoundValue[] = []
-  for (let at = nextStart(text, 0); at >= 0;) {
-    const line = lineAt(text, at)
+  let unended = 0
+  let line = 1
+  let counted = 0
+  for (let at = nextStart(text, 0); at >= 0 && unended < mostUnended;) {
+    for (; counted < at; counted++) if (text[counted] === '\n') line++
     const end = endOfValue(text, at)
     const parsed = end < 0 ? undefined : parse(text.slice(at, end))
     if (parsed && 'value' in parsed) {
@@ -17,6 +23,7 @@ export function jsonValues(text: string): FoundValue[] {
       at = nextStart(text, end)
       continue
     }
+    if (end < 0) unended++
     found.push({ line, trouble: end < 0 ? `it begins on line ${line} and never ends` : (parsed?.trouble ?? '') })
     at = nextStart(text, end < 0 ? afterLine(text, at) : end)
   }
@@ -54,8 +61,6 @@ function parse(text: string): { value: unknown } | { trouble: string } {
     return { trouble: error instanceof Error ? error.message : String(error) }
   }
 }
-
-const lineAt = (text: string, at: number): number => text.slice(0, at).split('\n').length
 
 function afterLine(text: string, at: number): number {
   const end = text.indexOf('\n', at)

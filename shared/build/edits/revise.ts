@@ -12,6 +12,8 @@ const fieldWords: Readonly<Partial<Record<keyof PartPatch, string>>> = {
   model: 'model',
   name: 'name',
   serial: 'serial',
+  wwn: 'WWN',
+  makerModel: 'maker’s model',
   role: 'role',
   mode: 'mode',
   note: 'note',
