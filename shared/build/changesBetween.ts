@@ -13,6 +13,7 @@ export function changesBetween(from: BuildDocument, to: BuildDocument): Change[]
   const parts = lists(from.parts, to.parts)
   const models = lists(from.models, to.models)
   const accepted = lists(byKey(from.accepted), byKey(to.accepted))
+  const purchases = lists(byLine(from.purchases), byLine(to.purchases))
   // Joints first go and last come: a part that is held is not removed, and one that is not there holds nothing.
   return [
     ...[...joints.gone, ...joints.changed.map(({ was }) => was)].map(({ id }): Change => ({ op: 'removeJoint', id })),
@@ -27,6 +28,12 @@ export function changesBetween(from: BuildDocument, to: BuildDocument): Change[]
       op: 'acceptFinding',
       accepted: entry,
     })),
+    ...purchases.gone.map(({ line }): Change => ({ op: 'setPurchase', line, purchase: null })),
+    ...[...purchases.come, ...purchases.changed.map(({ is }) => is)].map(({ id: _id, line, ...purchase }): Change => ({
+      op: 'setPurchase',
+      line,
+      purchase,
+    })),
     ...(same(from.settings, to.settings) ? [] : [{ op: 'updateSettings' as const, settings: to.settings }]),
     ...renaming(from, to),
   ]
@@ -34,6 +41,10 @@ export function changesBetween(from: BuildDocument, to: BuildDocument): Change[]
 
 /** Accepted findings go by their key. */
 const byKey = (accepted: BuildDocument['accepted']) => accepted.map((entry) => ({ ...entry, id: entry.key }))
+
+/** Notes on buying go by the line of the parts list that they stand at. */
+const byLine = (purchases: BuildDocument['purchases']) =>
+  (purchases ?? []).map((purchase) => ({ ...purchase, id: purchase.line }))
 
 interface Lists<T> {
   gone: T[]

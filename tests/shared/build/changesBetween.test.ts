@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { apply } from '#shared/build/apply.ts'
 import { changesBetween } from '#shared/build/changesBetween.ts'
 import { changeSchema } from '#shared/build/changes.ts'
-import type { BuildDocument } from '#shared/build/document.ts'
+import { buildDocumentSchema, type BuildDocument } from '#shared/build/document.ts'
 import { invert } from '#shared/build/invert.ts'
 import { documentOf } from '../../helpers/fixtures/build.ts'
 import { shippedCatalog } from '../../fuzz/properties.ts'
@@ -48,6 +48,33 @@ describe('the way from one state of a build to another', () => {
       parts: before.parts.map((part) => (part.id === 'C1' ? { ...part, note: 'loud' } : part)),
     }
     expect(changesBetween(noted, before)).toEqual([{ op: 'updatePart', id: 'C1', patch: { note: null } }])
+  })
+
+  it('carries notes on buying', () => {
+    const bought = { ...before, purchases: [{ line: 'sas-4tb', owned: 2 }] }
+    const more = { ...before, purchases: [{ line: 'sas-4tb', owned: 1, note: 'one came broken' }] }
+    for (const [from, to] of [
+      [before, bought],
+      [bought, more],
+      [more, before],
+    ] as const)
+      expect(apply(from, changesBetween(from, to))).toEqual(to)
+  })
+
+  it('knows every field of a document', () => {
+    const known = [
+      'accepted',
+      'format',
+      'joints',
+      'machine',
+      'models',
+      'name',
+      'parts',
+      'purchases',
+      'settings',
+      'version',
+    ]
+    expect(Object.keys(buildDocumentSchema.shape).sort()).toEqual(known)
   })
 
   it('leads anywhere, in changes that the schema takes, and back', () => {
