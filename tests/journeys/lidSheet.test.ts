@@ -19,7 +19,7 @@ describe('the lid sheet, from the screen to paper', () => {
   afterAll(() => product.stop())
 
   const openSheet = async (context: BrowserContext, id: string): Promise<{ page: Page; address: string }> => {
-    await signInDemo(context, product.url, 'builder')
+    await signInDemo(context, product.url, 'irma')
     const buildId = await buildIdOf(context, product.url, example(id).name)
     const address = `${product.url}/builds/${buildId}`
     const page = await context.newPage()
