@@ -45,7 +45,8 @@ describe('changes as they are read and lit', () => {
   it('tell which figures of an own model changed', () => {
     const own = drive('own')
     const was = { ...base, models: [own] }
-    const is = { ...base, models: [{ ...own, mass_g: figure(700) }] } as BuildDocument
+    const heavier = { ...own, mass_g: figure(700) }
+    const is = { ...base, models: [heavier] }
     const [change] = tellChanges(resolve(was, catalog), resolve(is, catalog))
     expect(change).toMatchObject({ group: 'models', mark: 'changed' })
     expect(change?.text).toMatch(/^Own model changed: .+ \(mass_g set to 700 \(maker\)\)\.$/)
