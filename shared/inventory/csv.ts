@@ -1,4 +1,3 @@
-import Papa from 'papaparse'
 import { known, textOf, wwnOf } from './fields.ts'
 import type { Inventory, ObservedDrive } from './observed.ts'
 
@@ -13,6 +12,12 @@ export const csvFieldWords: Readonly<Record<CsvField, string>> = {
   bay: 'bay',
   device: 'device',
   firmware: 'firmware',
+}
+
+/** Splits a table into its rows: passed in, because the library that does it stands outside this pure room. */
+export type SplitRows = (text: string) => {
+  data: string[][]
+  errors: readonly { code: string; message: string; row?: number | undefined }[]
 }
 
 /** A table as text, with what its columns seem to hold. */
@@ -34,8 +39,8 @@ const names: Readonly<Record<CsvField, RegExp>> = {
 }
 
 /** Reads a table with a line of headings. The separator is guessed; a table without a known heading has none. */
-export function readCsvTable(text: string): CsvTable {
-  const { data, errors } = Papa.parse<string[]>(text.replace(/^\ufeff/, ''), { skipEmptyLines: 'greedy' })
+export function readCsvTable(text: string, splitRows: SplitRows): CsvTable {
+  const { data, errors } = splitRows(text.replace(/^\ufeff/, ''))
   const [head = [], ...body] = data
   const guess = head.map((name) => csvFields.find((field) => names[field].test(name.trim())) ?? null)
   const hasHead = guess.some((field) => field !== null)

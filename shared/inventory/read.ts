@@ -1,5 +1,5 @@
 import { readByPath } from './byPath.ts'
-import { readCsvTable, type CsvTable } from './csv.ts'
+import { readCsvTable, type CsvTable, type SplitRows } from './csv.ts'
 import { jsonValues } from './jsonValues.ts'
 import { isLsblk, readLsblk } from './lsblk.ts'
 import type { Inventory, ObservedDrive } from './observed.ts'
@@ -16,7 +16,7 @@ export type Listing =
  * Reads whatever mixture of `smartctl --json`, `lsblk --json` and `ls -l /dev/disk/by-path` a text holds; what holds none of them
  * is taken for a table. Drives seen twice (by two tools, or over both ports) become one.
  */
-export function readListing(text: string): Listing {
+export function readListing(text: string, splitRows: SplitRows): Listing {
   const inventory: Inventory = { drives: [], troubles: [], leftOut: 0 }
   const values = jsonValues(text)
   values.forEach((found, i) => {
@@ -25,7 +25,7 @@ export function readListing(text: string): Listing {
     else readValue(found.value, from, inventory)
   })
   const places = new Map(readByPath(text).map(({ device, place }) => [device, place]))
-  if (values.length === 0 && places.size === 0) return tableOrNothing(text)
+  if (values.length === 0 && places.size === 0) return tableOrNothing(text, splitRows)
   const drives = mergeDrives(inventory.drives).map((drive) => {
     const place = drive.device === undefined ? undefined : places.get(drive.device)
     return place ? { ...drive, place } : drive
@@ -33,8 +33,8 @@ export function readListing(text: string): Listing {
   return { kind: 'drives', inventory: { ...inventory, drives } }
 }
 
-function tableOrNothing(text: string): Listing {
-  const table = readCsvTable(text)
+function tableOrNothing(text: string, splitRows: SplitRows): Listing {
+  const table = readCsvTable(text, splitRows)
   return table.rows.length > 0 && table.columns.length > 0 ? { kind: 'table', table } : { kind: 'nothing' }
 }
 

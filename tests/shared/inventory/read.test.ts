@@ -1,8 +1,12 @@
 import fc from 'fast-check'
+import Papa from 'papaparse'
 import { describe, expect, test } from 'vitest'
 import { readCsvDrives } from '#shared/inventory/csv.ts'
 import type { Inventory } from '#shared/inventory/observed.ts'
-import { readListing } from '#shared/inventory/read.ts'
+import { readListing as readListingWith } from '#shared/inventory/read.ts'
+
+const readListing = (text: string) =>
+  readListingWith(text, (table) => Papa.parse<string[]>(table, { skipEmptyLines: 'greedy' }))
 
 /** Shapes as in the sources of smartmontools 7.3 to 8.0 and util-linux 2.38; serials and names are invented. */
 const ata = {
