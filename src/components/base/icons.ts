@@ -6,6 +6,7 @@ export const icons = {
   bell: 'M3.5 11.5h9L11.3 10V7a3.3 3.3 0 0 0-6.6 0v3zM6.7 13.8h2.6M8 3.7V2.4',
   check: 'm3 8.5 3.2 3L13 4.5',
   close: 'm4 4 8 8M12 4l-8 8',
+  comment: 'M2.5 3h11v8H7l-3 2.5V11H2.5z',
   copy: 'M5.5 5.5h8v8h-8zM10.5 5.5v-3h-8v8h3',
   down: 'm4 6 4 4 4-4',
   download: 'M8 2v8M4.5 7 8 10.5 11.5 7M2.5 13.5h11',
