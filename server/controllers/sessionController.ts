@@ -9,6 +9,7 @@ import { identifyGuest } from '../middleware/identify.ts'
 import { awaitsFirstAccount, register } from '../services/accountService.ts'
 import type { Context } from '../services/context.ts'
 import { toGuestSession } from '../services/guestService.ts'
+import { noteBrowser } from '../services/ownSessionService.ts'
 import { endSession, signIn, type IssuedSession, type SignedIn } from '../services/sessionService.ts'
 
 export async function readSession({ context, request, response, signedIn }: Call): Promise<Answer> {
@@ -38,6 +39,7 @@ export async function deleteSession({ context, response, signedIn }: Call): Prom
 /** Puts a new session into the browser; one that it had before ends. */
 async function startSession(call: Call, issued: IssuedSession): Promise<Session> {
   if (call.signedIn) await endSession(call.signedIn.sessionId, 'signed in anew')
+  await noteBrowser(issued.sessionId, call.request.get('user-agent'))
   writeSessionCookies(call.context.config, call.response, issued)
   return toSession(call.context, call.request, call.response, issued)
 }
