@@ -18,8 +18,12 @@ export function contradictionsOf(
 }
 
 /** A disk of 0 bytes is what a system shows of sectors that it cannot use (520 or 528 bytes). */
-function signsOf({ capacity_B, logical_B, rate_Gbps, mostRate_Gbps }: ObservedDrive): string[] {
+function signsOf({ device, alsoAs, capacity_B, logical_B, rate_Gbps, mostRate_Gbps }: ObservedDrive): string[] {
   const signs: string[] = []
+  if (alsoAs)
+    signs.push(
+      `Seen as ${[device, ...alsoAs].join(' and ')}: one drive by two paths, or two drives that tell one serial.`,
+    )
   if (capacity_B === 0)
     signs.push('The system sees 0 bytes: its sectors are of a size that the system does not take (520 or 528 bytes).')
   else if (logical_B !== undefined && logical_B !== 512 && logical_B !== 4096)

@@ -26,6 +26,10 @@ export interface DriveLine {
   power: string
   /** Phy of its controller, counted over the ports in their order; null where an expander stands between, or no path works. */
   phy: number | null
+  /** The controller that the phy belongs to. */
+  host: string | null
+  /** Phy of the backplane's own expander: taken for the bays in their order, common practice. */
+  expanderPhy: number | null
   sectors: string
   /** The rate that the link can run at by its parts, Gb/s. */
   rate_Gbps: number | null
@@ -63,6 +67,8 @@ function lineOf(build: ResolvedBuild, result: CheckResult | null, part: Resolved
     data: result ? dataPathWords(build, result.dataPaths, part) : '',
     power: powerWords(powerWays(part)),
     phy: path ? phyOf(build, path) : null,
+    host: path ? `${path.controllerPart}/${path.controller}` : null,
+    expanderPhy: expanderPhyOf(part),
     sectors: drive?.sectors ? `${drive.sectors.logical_B}/${drive.sectors.physical_B}` : '',
     rate_Gbps: path?.rate_Gbps ?? null,
     note: note ?? '',
@@ -80,5 +86,14 @@ export function phyOf(build: ResolvedBuild, path: DataPath): number | null {
     if (port === path.port) return before + path.lane
     before += host.connectorById.get(port)?.type.data?.lanes ?? 0
   }
+  return null
+}
+
+function expanderPhyOf(part: ResolvedPart): number | null {
+  for (const plug of part.connectors)
+    for (const joint of plug.joints) {
+      const { connector, part: holder } = joint.a === plug ? joint.b : joint.a
+      if (holder.model.expander && connector.bay !== undefined) return connector.bay - 1
+    }
   return null
 }

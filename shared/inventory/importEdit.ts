@@ -26,6 +26,25 @@ export function usualChoice(line: MatchLine): ImportChoice {
   return line.model ? { kind: 'add', model: line.model.model, bay: null } : { kind: 'ignore' }
 }
 
+/**
+ * The usual choices for all lines of a listing: new drives take the bay of the same number as they state, else the free bays
+ * in their order, each once.
+ */
+export function usualChoices(build: ResolvedBuild, lines: readonly MatchLine[]): ImportChoice[] {
+  const taken = new Set<string>()
+  return lines.map((line) => {
+    const choice = usualChoice(line)
+    if (choice.kind !== 'add') return choice
+    const free = freeBaysFor(build, choice.model).filter((place) => !taken.has(keyOf(place)))
+    const place = free.find(({ bay }) => bay.slot === line.observed.bay) ?? free[0]
+    if (!place) return choice
+    taken.add(keyOf(place))
+    return { ...choice, bay: { case: place.case.part.id, slot: place.bay.slot } }
+  })
+}
+
+const keyOf = (place: BayPlace): string => `${place.case.part.id}#${place.bay.slot}`
+
 /** Free bays that take a drive of a model, in the case's order. */
 export const freeBaysFor = (build: ResolvedBuild, model: Model): BayPlace[] =>
   baysOf(build).filter((place) => place.drives.length === 0 && fits(model, place.bay))

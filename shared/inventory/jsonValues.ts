@@ -27,6 +27,8 @@ export function jsonValues(text: string): FoundValue[] {
     found.push({ line, trouble: end < 0 ? `it begins on line ${line} and never ends` : (parsed?.trouble ?? '') })
     at = nextStart(text, end < 0 ? afterLine(text, at) : end)
   }
+  if (unended >= mostUnended)
+    found.push({ line, trouble: `too many values begin and never end: nothing behind line ${line} was read` })
   return found
 }
 

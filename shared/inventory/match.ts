@@ -40,6 +40,7 @@ export function matchDrives(
   observed: readonly ObservedDrive[],
 ): MatchPreview {
   const map = driveMap(build, result)
+  const hangsOn = byPosition(map, observed)
   const taken = new Set<DriveLine>()
   const found = new Map<ObservedDrive, { drive: DriveLine; by: MatchedBy }>()
   const ways: readonly [MatchedBy, (drive: ObservedDrive, line: DriveLine) => boolean][] = [
@@ -50,7 +51,7 @@ export function matchDrives(
     ],
     ['wwn', (drive, line) => drive.wwn !== undefined && drive.wwn === line.wwn],
     ['bay', (drive, line) => drive.bay !== undefined && drive.bay === line.bay],
-    ['position', (drive, line) => hangsOn(drive, line)],
+    ['position', (drive, line) => hangsOn(drive) === line],
     ['size', (drive, line) => line.serial === '' && isOfSize(drive, line)],
   ]
   for (const [by, fits] of ways)
@@ -76,10 +77,20 @@ export function matchDrives(
   return { lines, missing: map.filter((line) => line.serial !== '' && !taken.has(line)) }
 }
 
-/** The only stretch that a phy number tells surely is the one from the adapter itself. */
-function hangsOn({ place }: ObservedDrive, line: DriveLine): boolean {
-  if (place?.kind === 'phy') return place.expander === null && line.phy === place.phy && line.protocol !== 'nvme'
-  return place?.kind === 'ata' && line.phy === place.port - 1 && line.protocol === 'sata'
+/**
+ * The drive of the build at the place that a listing tells, where only one can be meant: with two adapters a phy number alone
+ * does not say which, and expanders are told apart by addresses that a build does not know.
+ */
+function byPosition(map: readonly DriveLine[], observed: readonly ObservedDrive[]) {
+  const only = (lines: readonly DriveLine[]) => (lines.length === 1 ? lines[0] : undefined)
+  const expanders = new Set(observed.flatMap(({ place }) => (place?.kind === 'phy' ? (place.expander ?? []) : [])))
+  return ({ place }: ObservedDrive): DriveLine | undefined => {
+    if (place?.kind === 'ata')
+      return only(map.filter((line) => line.protocol === 'sata' && line.phy === place.port - 1))
+    if (place?.kind !== 'phy') return undefined
+    if (place.expander === null) return only(map.filter((line) => line.protocol !== 'nvme' && line.phy === place.phy))
+    return expanders.size === 1 ? only(map.filter((line) => line.expanderPhy === place.phy)) : undefined
+  }
 }
 
 /** Same protocol, same motor or none, same capacity: as far as both are known. */

@@ -31,6 +31,8 @@ export interface ObservedDrive {
   mostRate_Gbps?: number
   place?: ObservedPlace
   bay?: number
+  /** Other devices under which the same drive was seen: over its second path, or because a listing was pasted twice. */
+  alsoAs?: string[]
 }
 
 /** Something of a listing that could not be read, with its place. */

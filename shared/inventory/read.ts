@@ -76,7 +76,10 @@ function mergeDrives(drives: readonly ObservedDrive[]): ObservedDrive[] {
 
 /** An exact capacity goes before a rounded one. */
 function combine(first: ObservedDrive, second: ObservedDrive): ObservedDrive {
-  const both = { ...second, ...first }
+  const also = [...(first.alsoAs ?? []), second.device].filter(
+    (device) => device !== undefined && device !== first.device,
+  )
+  const both = { ...second, ...first, ...(also.length > 0 && { alsoAs: [...new Set(also)] as string[] }) }
   if (!first.isRounded || second.capacity_B === undefined || second.isRounded) return both
   const { isRounded: _rounded, ...exact } = both
   return { ...exact, capacity_B: second.capacity_B }

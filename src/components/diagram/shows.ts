@@ -36,6 +36,12 @@ const faces = [
     component: defineAsyncComponent(() => import('../lid/LidFace.vue')),
   },
   {
+    id: 'drives',
+    label: 'Drives',
+    menu: 'Papers',
+    component: defineAsyncComponent(() => import('../drives/DrivesFace.vue')),
+  },
+  {
     id: 'labels',
     label: 'Labels',
     menu: 'Papers',
