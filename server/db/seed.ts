@@ -13,6 +13,8 @@ import { writeBuild } from '../services/buildService.ts'
 import { contentColumns, promptVerdict } from '../services/buildSummary.ts'
 import { contentHash } from '../services/contentHash.ts'
 import type { Context } from '../services/context.ts'
+import { keepDrives } from '../services/driveIndex.ts'
+import { keepPins } from '../services/keepPins.ts'
 import { hashPassword } from '../services/passwordService.ts'
 import { demoAccounts } from './demoAccounts.ts'
 import { withLock } from './lock.ts'
@@ -105,6 +107,8 @@ async function renewDemoBuild(context: Context, build: Build, document: BuildDoc
       },
       { transaction },
     )
+    await keepDrives(context.database, { buildId: build.id, document, edits: [] }, transaction)
+    await keepPins(context, { buildId: build.id, revision, document }, transaction)
     const cause = { userId: newest.authorId ?? demoOwner().id }
     await lapseApprovals(context, { buildId: build.id, revision, document, cause }, transaction)
   })

@@ -4,6 +4,7 @@ import { buildRoutes } from './builds.ts'
 import { catalogRoutes } from './catalog.ts'
 import { checkRoutes } from './checks.ts'
 import { commentRoutes } from './comments.ts'
+import { driveRoutes } from './drives.ts'
 import { healthRoutes } from './health.ts'
 import { invitationRoutes } from './invitations.ts'
 import { labelRoutes } from './labels.ts'
@@ -37,6 +38,7 @@ const resources: readonly AnyRoute[] = [
   ...labelRoutes,
   ...lidSheetRoutes,
   ...liveRoutes,
+  ...driveRoutes,
   ...catalogRoutes,
   ...ownModelRoutes,
   ...checkRoutes,

@@ -12,6 +12,7 @@ import { contentColumns, promptVerdict } from './buildSummary.ts'
 import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
 import type { KnownGuest } from './guestService.ts'
+import { keepDrives } from './driveIndex.ts'
 import { Refusal } from './refusal.ts'
 import { readDocument } from './revisionStore.ts'
 
@@ -145,4 +146,5 @@ export async function writeBuild(
     },
     transaction,
   )
+  await keepDrives(context.database, { buildId: id, document, edits: [] }, transaction)
 }

@@ -13,6 +13,7 @@ import { lapseApprovals } from './approvalService.ts'
 import { contentColumns, promptVerdict } from './buildSummary.ts'
 import { contentHash } from './contentHash.ts'
 import type { Context } from './context.ts'
+import { keepDrives } from './driveIndex.ts'
 import { keepPins } from './keepPins.ts'
 import { Refusal } from './refusal.ts'
 import { readDocument } from './revisionStore.ts'
@@ -92,6 +93,7 @@ export async function saveEdits(
       },
       { transaction },
     )
+    await keepDrives(context.database, { buildId, document, edits }, transaction)
     await keepPins(context, { buildId, revision, document }, transaction)
     const what =
       request.restored === undefined

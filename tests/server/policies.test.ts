@@ -126,6 +126,7 @@ const expectedPolicies: Readonly<Record<string, PolicyName>> = {
   'get /api/events': 'signed-in',
   'get /api/notifications': 'signed-in',
   'post /api/notifications/read': 'signed-in',
+  'get /api/drives': 'signed-in',
   'get /api/catalog': 'anybody',
   'put /api/catalog/models/:modelId': 'edit-catalog',
   'get /api/own-models': 'signed-in',

@@ -11,7 +11,8 @@ import { comments } from './009-comments.ts'
 import { live } from './010-live.ts'
 import { mail } from './011-mail.ts'
 import { rounds } from './012-rounds.ts'
-import { modelPhotos } from './016-model-photos.ts'
+import { drives } from './013-drives.ts'
+import { modelPhotos } from './014-model-photos.ts'
 
 /** Every migration in order. A migration that has shipped is never changed; add the next number. */
 export const migrations: readonly Migration[] = [
@@ -27,5 +28,6 @@ export const migrations: readonly Migration[] = [
   live,
   mail,
   rounds,
+  drives,
   modelPhotos,
 ]

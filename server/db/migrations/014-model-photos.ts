@@ -2,7 +2,7 @@ import type { Migration } from '../migration.ts'
 
 /** The photo of a label beside an own model. It outlives the model for a while, so that removing one can be undone. */
 export const modelPhotos: Migration = {
-  name: '016-model-photos',
+  name: '014-model-photos',
   up: `
     CREATE TABLE model_photos (
       user_id uuid NOT NULL REFERENCES users ON DELETE CASCADE,
