@@ -65,7 +65,7 @@ describe('axe on every page, in both themes', () => {
     expect(await seriousIn(page, new AxeBuilder({ page })), `${where}, light`).toEqual([])
     const light = await paper(page)
     await page.emulateMedia({ colorScheme: 'dark' })
-    await expect.poll(() => paper(page), { message: `${where} turns dark` }).not.toBe(light)
+    await expect.poll(() => paper(page), { message: `${where} turns dark`, timeout: 10_000 }).not.toBe(light)
     expect(await seriousIn(page, new AxeBuilder({ page }).withRules(colourRules)), `${where}, dark`).toEqual([])
     await page.emulateMedia({ colorScheme: 'light' })
   }
