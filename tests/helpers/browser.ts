@@ -35,7 +35,7 @@ export function useBrowser(): TestBrowser {
   let expected: RegExp[] = []
 
   const listen = (page: Page) => {
-    page.setDefaultTimeout(20_000)
+    page.setDefaultTimeout(45_000)
     page.on('pageerror', (error) => complaints.push(`thrown: ${error.message}`))
     page.on('console', (message) => {
       if (message.type() === 'error') complaints.push(`console: ${message.text()} (${message.location().url})`)
