@@ -32,6 +32,11 @@ const faces: readonly [face: string, shown: RegExp][] = [
   ['joints', /W1/],
   ['findings', /W1 in carries/],
   ['bays', /C1/],
+  ['history', /Every save is a revision/],
+  ['lid', /before you pull/i],
+  ['labels', /./],
+  ['parts', /still to buy|Nothing left to buy/],
+  ['drives', /Names for the system/],
   ['review', /8 of 3 TB SAS/],
 ]
 
@@ -59,14 +64,17 @@ describe('axe on every page, in both themes', () => {
       .map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`)
   }
 
+  /** Only violations are written out in full: what passes is thousands of nodes. */
+  const lookAt = (page: Page) => new AxeBuilder({ page }).options({ resultTypes: ['violations'] })
+
   const paper = (page: Page) => page.evaluate(() => getComputedStyle(document.body).backgroundColor)
 
   const expectNothingSerious = async (page: Page, where: string) => {
-    expect(await seriousIn(page, new AxeBuilder({ page })), `${where}, light`).toEqual([])
+    expect(await seriousIn(page, lookAt(page)), `${where}, light`).toEqual([])
     const light = await paper(page)
     await page.emulateMedia({ colorScheme: 'dark' })
     await expect.poll(() => paper(page), { message: `${where} turns dark`, timeout: 10_000 }).not.toBe(light)
-    expect(await seriousIn(page, new AxeBuilder({ page }).withRules(colourRules)), `${where}, dark`).toEqual([])
+    expect(await seriousIn(page, lookAt(page).withRules(colourRules)), `${where}, dark`).toEqual([])
     await page.emulateMedia({ colorScheme: 'light' })
   }
 
