@@ -14,7 +14,7 @@ export const lidSheetRequestSchema = z.strictObject({
     .optional(),
   paper: z.enum(paperNames).default('a4'),
   colour: z.boolean().default(false),
-  diagram: z.enum(diagramChoices).default('pages'),
+  diagram: z.enum(diagramChoices).default('auto'),
   /** Absent: as the case states. */
   seenFrom: z.enum(viewNames).optional(),
   contact: z.string().max(300).default(''),

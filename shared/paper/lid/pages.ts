@@ -21,7 +21,9 @@ import {
 } from './wordSections.ts'
 
 /** Whether the diagram goes along: in print that can be read, on one page however small, or not at all. */
-export const diagramChoices = ['pages', 'overview', 'none'] as const
+export const diagramChoices = ['auto', 'pages', 'overview', 'none'] as const
+/** Pages up to which `auto` prints the diagram to be read; beyond, the whole on one page. */
+const mostDiagramPages = 4
 export type DiagramChoice = (typeof diagramChoices)[number]
 
 export interface LidOptions {
@@ -106,7 +108,9 @@ function diagramOf(
   area: { x: number; y: number; width: number; height: number },
 ) {
   if (choice === 'none' || diagram.drawing.nodes.length === 0) return []
-  return choice === 'pages' ? diagramPages(diagram, inks, area) : overviewPage(diagram, inks, area)
+  if (choice === 'overview') return overviewPage(diagram, inks, area)
+  const pages = diagramPages(diagram, inks, area)
+  return choice === 'pages' || pages.length <= mostDiagramPages ? pages : overviewPage(diagram, inks, area)
 }
 
 /** What stands on the sheet, in the order in which a hand that holds it asks. */

@@ -22,7 +22,7 @@ export function useLidOptions(buildId: string, livePlan: string) {
   const initial: LidChoices = {
     paper: preferences.paper,
     colour: false,
-    diagram: 'pages',
+    diagram: 'auto',
     seenFrom: 'case',
     contact: '',
     address: livePlan,

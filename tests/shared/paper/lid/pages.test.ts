@@ -90,6 +90,13 @@ describe('the lid sheet of an example', () => {
     for (const { part } of build.parts) expect(squeezed).toContain(part.ref)
   })
 
+  it('prints the diagram to be read on up to four pages, a larger one whole on one', () => {
+    const count = (id: string, diagram: 'auto' | 'pages' | 'none') => lidOf(example(id), { diagram }).paper.pages.length
+    expect(count('north-room-clean', 'auto')).toBe(count('north-room-clean', 'pages'))
+    expect(count('stress-60', 'pages')).toBeGreaterThan(count('stress-60', 'none') + 4)
+    expect(count('stress-60', 'auto')).toBe(count('stress-60', 'none') + 1)
+  })
+
   it('of up to sixteen drives stands on one page of A4 where little is found', () => {
     const { pages } = lidOf(example('north-room-clean'), { diagram: 'none' }).paper
     expect(pages).toHaveLength(1)
