@@ -7,7 +7,8 @@ import type {
 } from '#shared/contract/comments.ts'
 import { created, ok, type Answer, type Call } from '../middleware/call.ts'
 import { deleteComment, editComment, reply, setResolved, startThread } from '../services/commentService.ts'
-import { listMentionable, listPinMarks, listThreads, type ThreadQuery } from '../services/threadList.ts'
+import { findThread, listMentionable, listPinMarks, listThreads, type ThreadQuery } from '../services/threadList.ts'
+import { Refusal } from '../services/refusal.ts'
 import { reviewerOf } from './reviewerOf.ts'
 
 type OfThread<Body = unknown> = Call<{ buildId: string; threadId: string }, unknown, Body>
@@ -15,6 +16,12 @@ type OfComment<Body = unknown> = Call<{ buildId: string; commentId: string }, un
 
 export async function readThreads(call: Call<{ buildId: string }, ThreadQuery>): Promise<Answer> {
   return ok(await listThreads(call.context, call.params.buildId, reviewerOf(call), call.query))
+}
+
+export async function readThread(call: OfThread): Promise<Answer> {
+  const thread = await findThread(call.context, call.params.buildId, call.params.threadId, reviewerOf(call))
+  if (!thread) throw new Refusal('not-found')
+  return ok(thread)
 }
 
 export async function readPins({ context, params }: Call<{ buildId: string }>): Promise<Answer> {

@@ -18,6 +18,7 @@ import {
   putThreadState,
   readMentionable,
   readPins,
+  readThread,
   readThreads,
   removeComment,
 } from '../controllers/commentController.ts'
@@ -34,6 +35,15 @@ export const commentRoutes = [
     query: listThreadsQuerySchema,
     answers: { 200: threadListSchema },
     controller: readThreads,
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/builds/:buildId/threads/:threadId',
+    policy: 'see-build',
+    summary: 'One thread with its comments',
+    params: threadParams,
+    answers: { 200: threadSchema },
+    controller: readThread,
   }),
   defineRoute({
     method: 'get',

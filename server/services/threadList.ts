@@ -151,7 +151,11 @@ async function withComments(
   )
   const names = await namesOf({ database }, rows, transaction)
   const byThread = new Map<string, CommentRow[]>()
-  for (const row of rows) byThread.set(row.thread_id, [...(byThread.get(row.thread_id) ?? []), row])
+  for (const row of rows) {
+    const own = byThread.get(row.thread_id)
+    if (own) own.push(row)
+    else byThread.set(row.thread_id, [row])
+  }
   return threads.map((thread) => ({
     id: thread.id,
     number: thread.number,

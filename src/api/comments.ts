@@ -25,6 +25,9 @@ const path = (buildId: string, rest: string): string => `/api/builds/${step(buil
 export const listThreads = (buildId: string, query: ThreadsQuery, signal?: AbortSignal): Promise<ThreadList> =>
   request(threadListSchema, 'GET', path(buildId, '/threads'), { query: { ...query }, signal })
 
+export const readThread = (buildId: string, threadId: string, signal?: AbortSignal): Promise<Thread> =>
+  request(threadSchema, 'GET', path(buildId, `/threads/${step(threadId)}`), { signal })
+
 export const listPins = (buildId: string, signal?: AbortSignal): Promise<PinMark[]> =>
   request(z.array(pinMarkSchema), 'GET', path(buildId, '/pins'), { signal })
 

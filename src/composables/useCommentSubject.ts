@@ -1,4 +1,5 @@
 import { computed } from 'vue'
+import { useRoute, useRouter } from 'vue-router'
 import { aboutOf } from '#shared/comments/about.ts'
 import type { Thread } from '#shared/contract/comments.ts'
 import { ledgerKey } from '../diagram/ledgerRows.ts'
@@ -20,6 +21,8 @@ export function useCommentSubject(thread: () => Thread) {
   const selection = useSelectionStore()
   const checks = useChecksStore()
   const comments = useCommentsStore()
+  const route = useRoute()
+  const router = useRouter()
 
   function showPart(id: string, connector?: string): void {
     selection.choose({ parts: [id], connector: connector === undefined ? null : { part: id, connector } })
@@ -72,7 +75,7 @@ export function useCommentSubject(thread: () => Thread) {
       case 'spot':
         return { about, show: () => (comments.spot = { x: pin.x, y: pin.y }) }
       case 'lid-line':
-        return { about }
+        return { about, show: () => router.push({ query: { ...route.query, show: 'lid' } }) }
     }
   })
 }

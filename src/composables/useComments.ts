@@ -44,6 +44,17 @@ function useCommentActs(buildId: string, client: ReturnType<typeof useQueryClien
   }
 }
 
+/** The thread that a pin or a link leads to, wherever in the list it stands; null where none is asked for. */
+export function useThread(buildId: string, threadId: () => string | null) {
+  const { data } = useQuery({
+    queryKey: [...commentsKey(buildId), 'thread', threadId],
+    queryFn: ({ signal }) => api.readThread(buildId, threadId() ?? '', signal),
+    enabled: () => threadId() !== null,
+    retry: false,
+  })
+  return computed(() => (threadId() === null ? null : (data.value ?? null)))
+}
+
 /** Keeps the store's marks of open threads true while a build is open: once a page, in its view. */
 export function usePinMarks(buildId: string): void {
   const comments = useCommentsStore()

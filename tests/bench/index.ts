@@ -1,5 +1,6 @@
 import { apiRows } from './api.ts'
 import { canvasRows } from './canvas.ts'
+import { commentRows } from './comments.ts'
 import { fullCheckRows } from './fullCheck.ts'
 import { printTable } from './measure.ts'
 import { networkSolveRows } from './networkSolve.ts'
@@ -13,6 +14,7 @@ printTable([
   ...fullCheckRows(),
   ...(await apiRows()),
   ...(await revisionRows()),
+  ...(await commentRows()),
   ...(await paperRows()),
   ...(await scriptSizeRows()),
   ...(await canvasRows()),

@@ -133,6 +133,14 @@ describe('the list', () => {
     expect(first.items).toHaveLength(30)
     expect(first.items[0]?.id).toBe(oldest?.id)
   })
+
+  test('gives one thread by its id, and none of another build', async () => {
+    const { id } = await start(owner, 'alone')
+    expect(threadSchema.parse((await reader.get(`${build}/threads/${id}`)).body).comments[0]?.text).toBe('alone')
+    const other = await owner.post('/api/builds/import', { document: cablesDocument('Other', 1) })
+    const elsewhere = openBuildSchema.parse(other.body).id
+    expect((await owner.get(`/api/builds/${elsewhere}/threads/${id}`)).status).toBe(404)
+  })
 })
 
 describe('answers', () => {

@@ -91,6 +91,7 @@ const expectedPolicies: Readonly<Record<string, PolicyName>> = {
   'post /api/builds/:buildId/archive': 'own-build',
   'post /api/builds/:buildId/restore': 'own-build',
   'get /api/builds/:buildId/threads': 'see-build',
+  'get /api/builds/:buildId/threads/:threadId': 'see-build',
   'get /api/builds/:buildId/pins': 'see-build',
   'get /api/builds/:buildId/mentionable': 'comment-on-build',
   'post /api/builds/:buildId/threads': 'comment-on-build',
