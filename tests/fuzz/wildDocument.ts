@@ -34,7 +34,9 @@ const oddQuantity: fc.Arbitrary<Quantity> = fc
   .map(({ value, spread, origin }) => ({
     value,
     origin,
-    ...(spread === null ? {} : { low: asFigure((value ?? 1) / (1 + spread)), high: Math.min(1e9, (value ?? 1) * (1 + spread)) }),
+    ...(spread === null
+      ? {}
+      : { low: asFigure((value ?? 1) / (1 + spread)), high: Math.min(1e9, (value ?? 1) * (1 + spread)) }),
   }))
 
 /** Every path of a model at which a part may put its own figure. */
