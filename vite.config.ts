@@ -50,6 +50,8 @@ export default defineConfig({
           globalSetup: ['server/setup/vitestDatabase.mjs'],
           testTimeout: seconds(60),
           hookTimeout: seconds(60),
+          // Each file makes an app and a database of its own and closes both: loading the server once for all saves a minute.
+          isolate: false,
         },
       },
       {
